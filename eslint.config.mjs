@@ -63,7 +63,12 @@ export const zones = [
   { room: "lib/display", ours: floor, npm: [] },
   { room: "lib/worker", ours: [...pureLib, "lib/worker"], npm: ["piscina", "node:*"] },
   { room: "lib/server", ours: [...pureLib, "lib/worker", "lib/server", "db"], npm: ["*"] },
-  { room: "db", ours: [...floor, "db"], npm: ["drizzle-orm", "@libsql/client", "node:*", "server-only"] },
+  // JSON columns are typed by the science that fills them, hence track and analysis.
+  {
+    room: "db",
+    ours: [...floor, "lib/track", "lib/analysis", "db"],
+    npm: ["drizzle-orm", "@libsql/client", "uuidv7", "node:*", "server-only"],
+  },
   { room: "components/ui", ours: ["components/ui", "lib/display", ...floor], npm: ui },
   {
     room: "components/chart",

@@ -1,0 +1,62 @@
+import { unstable_rethrow } from "next/navigation";
+import { newId } from "@/db/new-id";
+import { AppError, type FieldErrors } from "@/lib/errors/app-error";
+import { logEvent } from "@/lib/server/context/log";
+
+/** What a form gets back: values are returned because React resets the fields after an action. */
+export type FormState = {
+  readonly status: "idle" | "ok" | "error";
+  readonly message: string;
+  readonly fields: FieldErrors;
+  readonly values: Readonly<Record<string, string>>;
+};
+
+/** The state before anything was sent. */
+export const IDLE_FORM: FormState = { status: "idle", message: "", fields: {}, values: {} };
+
+const SECRET_FIELD = /password|token/i;
+
+/** The text fields of a form to give back, without passwords and files. */
+export function formValues(form: FormData): Record<string, string> {
+  const values: Record<string, string> = {};
+  for (const [name, value] of form.entries()) {
+    if (typeof value === "string" && !SECRET_FIELD.test(name) && !name.startsWith("$")) values[name] = value;
+  }
+  return values;
+}
+
+/** An error as the person may see it: known ones in their own words, unknown ones by a reference id only. */
+export function describeError(error: unknown): {
+  code: AppError["code"];
+  message: string;
+  fields: FieldErrors;
+} {
+  if (error instanceof AppError) {
+    if (error.code === "forbidden" || error.code === "not_found") {
+      logEvent("warn", "denied", { code: error.code, message: error.message });
+    }
+    return { code: error.code, message: error.message, fields: error.fields };
+  }
+  const reference = newId();
+  logEvent("error", "unexpected", {
+    reference,
+    error: error instanceof Error ? `${error.name}: ${error.message}` : String(error),
+    stack: error instanceof Error ? error.stack : undefined,
+  });
+  return {
+    code: "internal",
+    message: `Something went wrong on our side. Nothing was changed. Reference ${reference}.`,
+    fields: {},
+  };
+}
+
+/** Runs an action's work and turns what it throws into a form state; redirects pass through. */
+export async function formAction(form: FormData, work: () => Promise<string>): Promise<FormState> {
+  try {
+    return { status: "ok", message: await work(), fields: {}, values: {} };
+  } catch (error) {
+    unstable_rethrow(error);
+    const { message, fields } = describeError(error);
+    return { status: "error", message, fields, values: formValues(form) };
+  }
+}
