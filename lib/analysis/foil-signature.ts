@@ -1,0 +1,134 @@
+import type { SmoothedTrack } from "@/lib/track/smoothed-track";
+import type { FoilSpan } from "./on-foil";
+
+/**
+ * Off the foil the hull holds a rider near walking pace; on it drag falls and the speed jumps. A displacement hull
+ * passes any threshold slowly. Common practice, no source; on recorded yachts the step is 0.2 m/s, on modelled
+ * foil sessions 3-9 m/s.
+ */
+const STEP_MPS_MIN = 1.2;
+const STEP_OF_STALL_MIN = 0.35;
+const QUICK_S = 12;
+const QUICK_SHARE_MIN = 0.5;
+/** Faster than this on average is a road or a railway, not a foil (about 33 kn). Common practice, no source. */
+const MEAN_MPS_MAX = 17;
+/** A foil surges and sinks; a hull under way does not: spread of speed about its own 20 s mean, m/s. */
+const LIVELY_MPS = 0.3;
+
+type Edge = "quick" | "slow" | "unseen";
+
+function meanSpeed(track: SmoothedTrack, fromIndex: number, toIndex: number): number {
+  const first = Math.max(0, Math.round(fromIndex));
+  const last = Math.min(track.count - 1, Math.round(toIndex));
+  let sum = 0;
+  let seen = 0;
+  for (let i = first; i <= last; i++) {
+    if ((track.gapS[i] ?? 0) > 8) continue;
+    sum += track.speedMps[i] ?? 0;
+    seen++;
+  }
+  return seen * track.stepMs >= 1000 ? sum / seen : NaN;
+}
+
+/**
+ * Seconds from the last time at hull speed to the first time well above stall, walking outwards and inwards from
+ * an edge; `outwards` is -1 at a take-off, +1 at a touchdown. Capped at a minute each way.
+ */
+function passingS(track: SmoothedTrack, index: number, outwards: 1 | -1, stallMps: number): number {
+  const reach = Math.round(60000 / track.stepMs);
+  const middle = Math.round(index);
+  const speed = (i: number): number => track.speedMps[i] ?? 0;
+  let out = middle;
+  while (out > 0 && out < track.count - 1 && speed(out) > 0.7 * stallMps && Math.abs(out - middle) < reach) {
+    out += outwards;
+  }
+  let inside = middle;
+  while (
+    inside > 0 &&
+    inside < track.count - 1 &&
+    speed(inside) < 1.15 * stallMps &&
+    Math.abs(inside - middle) < reach
+  ) {
+    inside -= outwards;
+  }
+  return (Math.abs(out - inside) * track.stepMs) / 1000;
+}
+
+function edgeOf(track: SmoothedTrack, index: number, outwards: 1 | -1, stallMps: number): Edge {
+  const perS = 1000 / track.stepMs;
+  const window = (fromS: number, toS: number): number => {
+    const a = index + outwards * fromS * perS;
+    const b = index + outwards * toS * perS;
+    return meanSpeed(track, Math.min(a, b), Math.max(a, b));
+  };
+  const outside = window(3, 8);
+  const inside = window(-6, -1);
+  if (Number.isNaN(outside) || Number.isNaN(inside)) return "unseen";
+  const needed = Math.max(STEP_MPS_MIN, STEP_OF_STALL_MIN * stallMps);
+  const quick = inside - outside >= needed && passingS(track, index, outwards, stallMps) <= QUICK_S;
+  return quick ? "quick" : "slow";
+}
+
+/** Spread of speed about its own 20 s mean with the noise taken out (m/s). */
+function liveliness(track: SmoothedTrack, span: FoilSpan): number {
+  const half = Math.round(10000 / track.stepMs);
+  const stride = Math.max(1, Math.round(1000 / track.stepMs));
+  let squares = 0;
+  let seen = 0;
+  let sum = 0;
+  let inWindow = 0;
+  const first = Math.ceil(span.start);
+  const last = Math.floor(span.end);
+  let head = first;
+  let tail = first;
+  for (let i = first; i <= last; i++) {
+    while (head <= Math.min(last, i + half)) {
+      sum += track.speedMps[head++] ?? 0;
+      inWindow++;
+    }
+    while (tail < i - half) {
+      sum -= track.speedMps[tail++] ?? 0;
+      inWindow--;
+    }
+    if ((i - first) % stride !== 0) continue;
+    const deviation = (track.speedMps[i] ?? 0) - sum / inWindow;
+    squares += deviation ** 2 - (track.speedSeMps[i] ?? 0) ** 2;
+    seen++;
+  }
+  return seen > 0 ? Math.sqrt(Math.max(0, squares / seen)) : 0;
+}
+
+const isTooFast = (track: SmoothedTrack, span: FoilSpan): boolean =>
+  meanSpeed(track, span.start, span.end) > MEAN_MPS_MAX;
+
+/**
+ * The spans that foiling explains, out of those that are merely fast enough.
+ *
+ * The whole session must show the jump between hull speed and flying speed at half of its seen take-offs and
+ * touchdowns or more: else (a yacht, a kayak, a ferry) nothing is kept, unless no edge was recorded at all and the
+ * speed is as lively as bumps make it. A single span that begins and ends slowly and runs as steadily as a boat
+ * under way is left out too (the tow home), and so is one that is faster than any foil on average.
+ * In: the track, spans by sample index, the session's stall speed (m/s). Out: a part of the spans, in order.
+ */
+export function keepFoiling(
+  track: SmoothedTrack,
+  spans: readonly FoilSpan[],
+  stallMps: number,
+): readonly FoilSpan[] {
+  const judged = spans
+    .filter((span) => !isTooFast(track, span))
+    .map((span) => ({
+      span,
+      takeoff: edgeOf(track, span.start, -1, stallMps),
+      touchdown: edgeOf(track, span.end, 1, stallMps),
+    }));
+  const edges = judged.flatMap((one) => [one.takeoff, one.touchdown]).filter((edge) => edge !== "unseen");
+  const quick = edges.filter((edge) => edge === "quick").length;
+  if (edges.length > 0 && quick < QUICK_SHARE_MIN * edges.length) return [];
+  return judged
+    .filter(
+      ({ span, takeoff, touchdown }) =>
+        takeoff === "quick" || touchdown === "quick" || liveliness(track, span) >= LIVELY_MPS,
+    )
+    .map(({ span }) => span);
+}
