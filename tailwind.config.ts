@@ -3,7 +3,6 @@ import type { Config } from "tailwindcss";
 /** The tokens of the log sheet; their values per theme are custom properties in app/globals.css. */
 const config: Config = {
   content: ["./app/**/*.{ts,tsx}", "./components/**/*.{ts,tsx}", "./lib/display/**/*.ts"],
-  darkMode: ["selector", '[data-theme="dark"]'],
   theme: {
     extend: {
       colors: {
@@ -16,10 +15,13 @@ const config: Config = {
         shell: "var(--shell)",
         buoy: "var(--buoy)",
         "buoy-text": "var(--buoy-text)",
+        swell: "var(--swell)",
+        water: "var(--water)",
+        land: "var(--land)",
       },
       fontFamily: {
-        sans: ["var(--font-archivo)", "system-ui", "sans-serif"],
-        mono: ["var(--font-spline-mono)", "ui-monospace", "monospace"],
+        sans: ["var(--sans)"],
+        mono: ["var(--mono)"],
       },
       borderRadius: { none: "0" },
     },
