@@ -92,7 +92,8 @@ export const zones = [
 const escape = (text) => text.replace(/[.*+?^${}()|[\]\\]/g, "\\$&");
 
 /** One regular expression that matches every import a zone may not make. */
-export function refusal(zone) {
+export function refusal({ room, ours, npm }) {
+  const zone = { ours: ours.includes(room) ? ours : [...ours, room], npm };
   if (zone.npm.includes("*")) {
     const ours = zone.ours.map((room) => `@/${escape(room)}/`).join("|");
     return `^(\\.\\./|@/(?!${ours.replaceAll("@/", "")}))`;
