@@ -1,18 +1,8 @@
 import { unstable_rethrow } from "next/navigation";
 import { newId } from "@/db/new-id";
 import { AppError, type FieldErrors } from "@/lib/errors/app-error";
+import type { FormState } from "@/lib/display/form-state";
 import { logEvent } from "@/lib/server/context/log";
-
-/** What a form gets back: values are returned because React resets the fields after an action. */
-export type FormState = {
-  readonly status: "idle" | "ok" | "error";
-  readonly message: string;
-  readonly fields: FieldErrors;
-  readonly values: Readonly<Record<string, string>>;
-};
-
-/** The state before anything was sent. */
-export const IDLE_FORM: FormState = { status: "idle", message: "", fields: {}, values: {} };
 
 const SECRET_FIELD = /password|token/i;
 
