@@ -85,7 +85,7 @@ export const zones = [
   {
     room: "app",
     ours: ["app", "components", "lib/server", ...pureLib],
-    npm: [...ui, "next/*", "server-only"],
+    npm: [...ui, "next", "next/*", "server-only"],
   },
 ];
 
