@@ -28,16 +28,22 @@ export function describeError(error: unknown): {
     return { code: error.code, message: error.message, fields: error.fields };
   }
   const reference = newId();
+  const isFull = isDiskFull(error);
   logEvent("error", "unexpected", {
     reference,
     error: error instanceof Error ? `${error.name}: ${error.message}` : String(error),
     stack: error instanceof Error ? error.stack : undefined,
   });
-  return {
-    code: "internal",
-    message: `Something went wrong on our side. Nothing was changed. Reference ${reference}.`,
-    fields: {},
-  };
+  const what = isFull ? "There is no room left on this server's disk." : "Something went wrong on our side.";
+  return { code: "internal", message: `${what} Nothing was changed. Reference ${reference}.`, fields: {} };
+}
+
+/** Whether an error, or what caused it, is a full disk or a database that may not grow. */
+function isDiskFull(error: unknown): boolean {
+  for (let cause: unknown = error; cause instanceof Error; cause = cause.cause) {
+    if ("code" in cause && (cause.code === "SQLITE_FULL" || cause.code === "ENOSPC")) return true;
+  }
+  return false;
 }
 
 /** Runs an action's work and turns what it throws into a form state; redirects pass through. */

@@ -12,7 +12,7 @@ import { env } from "@/lib/server/env/env";
 export function clientAddress(forwardedFor: string | null, trustedHops: number): string | null {
   if (trustedHops === 0 || forwardedFor === null) return null;
   const chain = forwardedFor.split(",").map((part) => part.trim());
-  return chain.at(-trustedHops) ?? null;
+  return chain.at(-trustedHops) || null;
 }
 
 /** The context of the request being answered, for pages, actions and routes. */

@@ -1,18 +1,62 @@
 import { mkdir } from "node:fs/promises";
-import { migrateDatabase } from "@/db/migrate";
 import { prepareDatabase } from "@/db/client";
+import { migrateDatabase } from "@/db/migrate";
 import { database } from "@/lib/server/context/database";
 import { logEvent } from "@/lib/server/context/log";
 import { env } from "@/lib/server/env/env";
+import { smtpSend, startSender } from "@/lib/server/mail/sender";
+import { backUpBeforeMigration } from "./backup";
+import { checkDatabase, freeDiskMb, probeWrite } from "./checks";
+import { startSweeping, sweep } from "./sweep";
+
+const holder = globalThis as typeof globalThis & { trimwakeStopTasks?: () => void };
 
 /**
- * What a server does before its first request: read the settings, make the data folder, bring the database to
- * the newest schema, assert its durability settings. It stops the process rather than serve on a broken base.
+ * What a server does before its first request: read the settings, make the data folder and try to write there,
+ * bring the database to the newest schema (with a copy first), assert that it is whole and durable, clear away
+ * what is over, and start the mail. It stops the process rather than serve on a broken base.
  */
 export async function startUp(): Promise<void> {
   const settings = env();
-  await mkdir(settings.dataDir, { recursive: true });
-  await prepareDatabase(database(), settings.databaseUrl);
-  await migrateDatabase(database(), process.cwd());
-  logEvent("info", "started", { demo: settings.demo, mode: settings.mode });
+  const { dataDir, databaseUrl } = settings;
+  await mkdir(dataDir, { recursive: true });
+  await probeWrite(dataDir);
+  const db = database();
+  await prepareDatabase(db, databaseUrl);
+  if (databaseUrl.startsWith("file:")) {
+    await backUpBeforeMigration(db, { root: process.cwd(), dataDir, nowMs: Date.now() });
+  }
+  await migrateDatabase(db, process.cwd());
+  const version = databaseUrl.startsWith("file:") ? (await checkDatabase(db)).version : null;
+  await sweep(db, Date.now());
+  startTasks();
+  closeAtTheEnd();
+  const freeMb = await freeDiskMb(dataDir);
+  if (freeMb < settings.minFreeDiskMb) logEvent("warn", "disk_nearly_full", { freeMb });
+  logEvent("info", "started", { demo: settings.demo, mode: settings.mode, sqlite: version, freeMb });
+}
+
+/** Starts what runs beside the requests; a development server that starts again stops its old ones first. */
+function startTasks(): void {
+  const { demo, mode, smtpUrl, mailFrom } = env();
+  holder.trimwakeStopTasks?.();
+  const stops = [startSweeping(database())];
+  if (smtpUrl !== null) stops.push(startSender(database(), smtpSend(smtpUrl, mailFrom)));
+  else if (mode === "production" && !demo) {
+    logEvent("warn", "no_mail", {
+      why: "SMTP_URL is not set: messages stay in the outbox and nobody gets them",
+    });
+  }
+  holder.trimwakeStopTasks = () => stops.forEach((stop) => stop());
+}
+
+/**
+ * Next answers SIGTERM and SIGINT itself: it lets the requests under way finish and exits. Closing the file in
+ * the last moment folds the write-ahead log back into it.
+ */
+function closeAtTheEnd(): void {
+  process.once("exit", () => {
+    holder.trimwakeStopTasks?.();
+    database().client.close();
+  });
 }

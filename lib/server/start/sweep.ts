@@ -1,0 +1,28 @@
+import type { Database } from "@/db/client";
+import { sweepEmailTokens } from "@/lib/server/accounts/internal";
+import { sweepSignIns } from "@/lib/server/auth/sign-ins";
+import { logEvent } from "@/lib/server/context/log";
+import { sweepOutbox } from "@/lib/server/mail/send-due";
+import { sweepThrottle } from "@/lib/server/throttle/throttle";
+
+const EVERY_MS = 3_600_000;
+
+/** Removes what has had its time: ended sign-ins, dead links, old counters and messages. */
+export async function sweep(db: Database, nowMs: number): Promise<void> {
+  const signIns = await sweepSignIns(db, nowMs);
+  const links = await sweepEmailTokens(db, nowMs);
+  const counters = await sweepThrottle(db, nowMs);
+  const messages = await sweepOutbox(db, nowMs);
+  logEvent("info", "swept", { signIns, links, counters, messages });
+}
+
+/** Sweeps every hour from now on. Gives back how to stop. */
+export function startSweeping(db: Database): () => void {
+  const timer = setInterval(() => {
+    sweep(db, Date.now()).catch((error: unknown) => {
+      logEvent("error", "sweep_failed", { error: error instanceof Error ? error.message : String(error) });
+    });
+  }, EVERY_MS);
+  timer.unref();
+  return () => clearInterval(timer);
+}

@@ -1,0 +1,35 @@
+import { randomBytes } from "node:crypto";
+import { NextResponse, type NextRequest } from "next/server";
+import { contentSecurityPolicy, securityHeaders } from "@/lib/server/adapter/security-headers";
+import { SESSION_COOKIE } from "@/lib/server/auth/session-cookie-name";
+import { env } from "@/lib/server/env/env";
+
+/**
+ * Gives every page its headers and a fresh nonce. It decides nothing about who may see what: that is the work of
+ * the verbs. Next reads the nonce for its own scripts from the request's policy.
+ */
+export function proxy(request: NextRequest): NextResponse {
+  const { mode, origin, mapStyleUrl } = env();
+  const settings = {
+    nonce: randomBytes(16).toString("base64"),
+    isDevelopment: mode === "development",
+    isHttps: origin.startsWith("https:"),
+    mapStyleUrl,
+  };
+  const inward = new Headers(request.headers);
+  inward.set("x-nonce", settings.nonce);
+  inward.set("content-security-policy", contentSecurityPolicy(settings));
+  const response = NextResponse.next({ request: { headers: inward } });
+  for (const [name, value] of Object.entries(securityHeaders(settings))) response.headers.set(name, value);
+  // Routes under /api say themselves what may be kept; pages of a person never may.
+  const isPage = !request.nextUrl.pathname.startsWith("/api/");
+  if (isPage && request.cookies.has(SESSION_COOKIE)) response.headers.set("cache-control", "no-store");
+  return response;
+}
+
+export const config = {
+  // Not the upload route: what passes here is cut at 10 MB. Not built files: they are the same for everybody.
+  matcher: [
+    "/((?!_next/static|_next/image|api/uploads|favicon.ico|icon|apple-icon|robots.txt|maplibre|fonts/).*)",
+  ],
+};
