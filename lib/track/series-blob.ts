@@ -8,12 +8,12 @@ const VERSION = 1;
 /** More samples than any readable file gives; bounds what a broken header can ask for. */
 const MAX_COUNT = 20_000_000;
 
-/** Steps in which a column is kept: a hundredth of a metre or a thousandth of a m/s is far below any receiver's error. */
+/** Steps in which a column is kept: a centimetre of place, a millimetre of way or a thousandth of a m/s is far below any receiver's error. */
 export const SERIES_STEPS = {
   positionDeg: 1e-7,
   speedMps: 1e-3,
   courseDeg: 0.1,
-  distanceM: 1e-2,
+  distanceM: 1e-3,
   heartRateBpm: 1,
 } as const;
 
@@ -28,7 +28,7 @@ type Coding = { readonly perUnit: number; readonly order: 1 | 2; readonly turn: 
 const POSITION: Coding = { perUnit: 1e7, order: 2, turn: 0 };
 const SPEED: Coding = { perUnit: 1e3, order: 1, turn: 0 };
 const COURSE: Coding = { perUnit: 10, order: 1, turn: 3600 };
-const DISTANCE: Coding = { perUnit: 100, order: 2, turn: 0 };
+const DISTANCE: Coding = { perUnit: 1e3, order: 2, turn: 0 };
 const HEART_RATE: Coding = { perUnit: 1, order: 1, turn: 0 };
 
 /**

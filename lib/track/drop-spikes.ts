@@ -1,0 +1,100 @@
+import { chainedPlane } from "@/lib/geo/chained-plane";
+
+import { type FixDraft, keepFixes } from "./fix-draft";
+import { localVelocity, type TimedPlane, type Velocity } from "./local-velocity";
+
+/** Departure from the local course that no rider makes in one step, and what each second of it may add (4.5 m/s is a hard fall or a launch). */
+const JUMP_M = 7;
+const JUMP_MPS = 4.5;
+/** Steps over a longer time say nothing about a jump. */
+const STEP_S_MAX = 20;
+/** A wrong block ends by a jump back within this time; after a leap faster than any vehicle here, within the longer one. */
+const BLOCK_S = 6.5;
+const BLOCK_S_AFTER_LEAP = 300;
+const LEAP_MPS = 60;
+/** Fixes looked at in all searches together: bounds the time on a file that is nothing but leaps. */
+const SEARCH_BUDGET = 3_000_000;
+
+/**
+ * Step 3b of the cleaning: spikes and blocks of wrong fixes. A fix is suspect when its step departs from the robust
+ * local velocity by more than a body can; it and those after it are dropped when, some seconds later, an equally sudden
+ * jump brings the path back to where the velocities on both sides say it should be. No global speed limit is used.
+ * A leap without a way back stays: see `LEAP_MPS` in the smoother, which never bridges it.
+ *
+ * @example
+ * dropSpikes({ count: 0, timeMs: new Float64Array(0), latDeg: new Float64Array(0), lonDeg: new Float64Array(0), source: new Uint32Array(0) }, 1).count; // 0
+ */
+export function dropSpikes(draft: FixDraft, medianStepS: number): FixDraft {
+  const { count } = draft;
+  if (count < 3) return draft;
+  const plane = chainedPlane(draft.latDeg, draft.lonDeg, count);
+  const t0 = draft.timeMs[0] as number;
+  const path: TimedPlane = {
+    ...plane,
+    count,
+    timeS: Float64Array.from(draft.timeMs, (t) => (t - t0) / 1000),
+  };
+  const keep = new Uint8Array(count).fill(1);
+  const search = { path, medianStepS, reachS: Math.max(4, 4 * medianStepS), budget: SEARCH_BUDGET };
+  const before: Velocity = { east: 0, north: 0 };
+  for (let i = 1; i < count; i++) {
+    const jumpM = departure(path, i, -1, before, search.reachS);
+    if (Number.isNaN(jumpM)) continue;
+    const end = blockEnd(search, i, before, jumpM);
+    if (end > i) {
+      keep.fill(0, i, end);
+      i = end;
+    }
+  }
+  return keepFixes(draft, keep);
+}
+
+/** How far step i - 1 to i departs from the velocity before it, or NaN when a rider could have done it. */
+function departure(path: TimedPlane, i: number, direction: -1, before: Velocity, reachS: number): number {
+  const dt = (path.timeS[i] as number) - (path.timeS[i - 1] as number);
+  if (dt > STEP_S_MAX) return NaN;
+  const dx = (path.xM[i] as number) - (path.xM[i - 1] as number);
+  const dy = (path.yM[i] as number) - (path.yM[i - 1] as number);
+  const allowed = JUMP_M + JUMP_MPS * Math.min(dt, 4) * Math.min(1, dt > 0.9 ? 1 : dt);
+  localVelocity(path, { from: i - 1, direction, reachS }, before);
+  const off = Math.hypot(dx - before.east * dt, dy - before.north * dt);
+  return off > allowed ? off : NaN;
+}
+
+type Search = {
+  readonly path: TimedPlane;
+  readonly medianStepS: number;
+  readonly reachS: number;
+  budget: number;
+};
+
+/** First fix after the wrong block that starts at `i`, or -1 when the path does not come back. */
+function blockEnd(search: Search, i: number, before: Velocity, jumpM: number): number {
+  const { path } = search;
+  const { timeS, xM, yM } = path;
+  const stepS = (timeS[i] as number) - (timeS[i - 1] as number);
+  const leap = jumpM / Math.max(stepS, 0.2) > LEAP_MPS && jumpM > 100;
+  const withinS = (leap ? BLOCK_S_AFTER_LEAP : BLOCK_S) + 2 * search.medianStepS;
+  const after: Velocity = { east: 0, north: 0 };
+  for (let j = i + 1; j < path.count && (timeS[j] as number) - (timeS[i] as number) <= withinS; j++) {
+    if (search.budget-- <= 0) return -1;
+    const lastS = (timeS[j] as number) - (timeS[j - 1] as number);
+    const stepX = (xM[j] as number) - (xM[j - 1] as number);
+    const stepY = (yM[j] as number) - (yM[j - 1] as number);
+    if (Math.hypot(stepX, stepY) < 0.25 * jumpM && jumpM > 40) continue;
+    if (!localVelocity(path, { from: j, direction: 1, reachS: search.reachS }, after)) {
+      after.east = before.east;
+      after.north = before.north;
+    }
+    const backM = Math.hypot(stepX - after.east * lastS, stepY - after.north * lastS);
+    if (backM < 6) continue;
+    const dt = (timeS[j] as number) - (timeS[i - 1] as number);
+    const aheadX = (xM[i - 1] as number) + 0.5 * (before.east + after.east) * dt;
+    const aheadY = (yM[i - 1] as number) + 0.5 * (before.north + after.north) * dt;
+    const missM = Math.hypot((xM[j] as number) - aheadX, (yM[j] as number) - aheadY);
+    const size = Math.max(jumpM, backM);
+    const slack = Math.max(6, Math.min(0.35 * size, 40)) + (dt > 12 ? 6 : 1.2) * dt;
+    if (missM < slack && missM < 0.6 * size) return j;
+  }
+  return -1;
+}
