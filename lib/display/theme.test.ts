@@ -88,6 +88,10 @@ describe("colour tokens", () => {
       ["light", 1],
       ["dark", 2],
     ] as const) {
+      for (const [band, colour] of speedRamp(theme).entries()) {
+        // The light ramp stands once more for paper.
+        expect(css.split(`--speed-${band}: ${colour};`).length - 1, `${theme} band ${band}`).toBe(2);
+      }
       for (const [token, value] of Object.entries(themeTokens(theme))) {
         expect(css.split(`${property(token)}: ${value};`).length - 1, `${theme} ${token}`).toBe(places);
       }

@@ -1,0 +1,10 @@
+import { redirect } from "next/navigation";
+import type { ReactNode } from "react";
+import { Frame } from "@/app/frame";
+import { currentUser } from "@/lib/server/auth/current-user";
+
+/** Nobody sees these pages signed out. What a person may see of them is decided by the verbs, not here. */
+export default async function AppLayout({ children }: { children: ReactNode }) {
+  if ((await currentUser()) === null) redirect("/sign-in");
+  return <Frame>{children}</Frame>;
+}

@@ -1,0 +1,23 @@
+import type { Metadata } from "next";
+import { LinkButton } from "@/components/ui/link-button";
+import { PageHeader } from "@/components/ui/page-header";
+import { Frame } from "./frame";
+
+export const metadata: Metadata = { title: "Not here" };
+
+export default function NotFound() {
+  return (
+    <Frame>
+      <PageHeader
+        title="This page is not here"
+        subtitle="It may have been deleted, the address may be mistyped, or it belongs to somebody who has not shared it with you."
+      />
+      <div className="flex flex-wrap gap-3">
+        <LinkButton href="/sessions" look="main">
+          To the sessions
+        </LinkButton>
+        <LinkButton href="/">To the front page</LinkButton>
+      </div>
+    </Frame>
+  );
+}
