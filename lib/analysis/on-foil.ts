@@ -36,8 +36,7 @@ function evidence(track: SmoothedTrack, thresholdMps: number): Float32Array {
   return odds;
 }
 
-const seconds = (track: SmoothedTrack, run: Run): number =>
-  ((run.to - run.from) * track.stepMs) / 1000;
+const seconds = (track: SmoothedTrack, run: Run): number => ((run.to - run.from) * track.stepMs) / 1000;
 
 function steadySpeeds(track: SmoothedTrack, runs: readonly Run[]): number[] {
   const head = Math.round(8000 / track.stepMs);

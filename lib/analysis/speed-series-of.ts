@@ -1,9 +1,4 @@
-import {
-  FLAG_GAP,
-  FLAG_ON_FOIL,
-  FLAG_ON_WATER,
-  type SpeedSeries,
-} from "@/lib/track/speed-series";
+import { FLAG_GAP, FLAG_ON_FOIL, FLAG_ON_WATER, type SpeedSeries } from "@/lib/track/speed-series";
 import type { SmoothedTrack } from "@/lib/track/smoothed-track";
 
 /** Slower than this there is no course worth showing (m/s). Common practice, no source. */
@@ -13,6 +8,13 @@ const COURSE_MPS_MIN = 0.5;
 function decimation(track: SmoothedTrack, rateHz: number): number {
   const wantedMs = rateHz > 1.5 ? 1000 / rateHz : 1000;
   return Math.max(1, Math.round(wantedMs / track.stepMs));
+}
+
+/** The first fine sample on a whole step of the clock, so that a 1 Hz series stands on whole seconds. */
+function alignedOffset(track: SmoothedTrack, every: number): number {
+  const stepMs = every * track.stepMs;
+  const late = ((track.startMs % stepMs) + stepMs) % stepMs;
+  return late === 0 ? 0 : Math.round((stepMs - late) / track.stepMs);
 }
 
 /** What the series needs beside the smoothed track. */
@@ -37,14 +39,15 @@ export type SeriesSource = {
 export function speedSeriesOf(source: SeriesSource): SpeedSeries {
   const { track, wayM, onFoil, gapLimitS } = source;
   const every = decimation(track, source.rateHz);
-  const count = Math.ceil(track.count / every);
-  const pick = (column: ArrayLike<number>) => (_: unknown, i: number) => column[i * every] ?? 0;
+  const offset = alignedOffset(track, every);
+  const count = Math.max(0, Math.ceil((track.count - offset) / every));
+  const pick = (column: ArrayLike<number>) => (_: unknown, i: number) => column[offset + i * every] ?? 0;
   const shape = { length: count };
   const heart = track.heartRateBpm;
   const flags = new Uint8Array(count);
   const courseDeg = new Float32Array(count);
   for (let i = 0; i < count; i++) {
-    const fine = i * every;
+    const fine = offset + i * every;
     const vx = track.vxMps[fine] ?? 0;
     const vy = track.vyMps[fine] ?? 0;
     const course = (Math.atan2(vx, vy) * 180) / Math.PI;
@@ -53,10 +56,11 @@ export function speedSeriesOf(source: SeriesSource): SpeedSeries {
     for (let k = fine; k < Math.min(track.count, fine + every); k++) {
       if ((track.gapS[k] ?? 0) > gapLimitS) gap = FLAG_GAP;
     }
-    flags[i] = gap | (track.onWater[fine] === 1 ? FLAG_ON_WATER : 0) | (onFoil[fine] === 1 ? FLAG_ON_FOIL : 0);
+    flags[i] =
+      gap | (track.onWater[fine] === 1 ? FLAG_ON_WATER : 0) | (onFoil[fine] === 1 ? FLAG_ON_FOIL : 0);
   }
   return {
-    startMs: track.startMs,
+    startMs: track.startMs + offset * track.stepMs,
     stepMs: track.stepMs * every,
     count,
     latDeg: Float64Array.from(shape, pick(track.latDeg)),

@@ -1,0 +1,97 @@
+import type { QualityGrade } from "@/lib/track/quality";
+import type { SpeedSeries, Stretch } from "@/lib/track/speed-series";
+import { METRES_PER_NM } from "@/lib/units/length";
+import type { Best, BestKey, Withheld } from "./analysis";
+import { excessOfMaximum } from "./excess-of-maximum";
+import {
+  fastestBetweenKnots,
+  fastestOverDistance,
+  fastestOverTime,
+  fastestSeparate,
+  rivalSpeeds,
+  type Window,
+} from "./fastest-window";
+import { meanSpeedSe } from "./mean-speed-se";
+import { wayCurveOf, withWayFromSpeed, type WayCurve } from "./way-curve";
+
+type BestWindow = { readonly timeS: number } | { readonly lengthM: number };
+
+/** The windows of the bests. */
+export const BEST_WINDOWS: Readonly<Record<BestKey, BestWindow>> = {
+  s2: { timeS: 2 },
+  s10: { timeS: 10 },
+  s60: { timeS: 60 },
+  s600: { timeS: 600 },
+  s3600: { timeS: 3600 },
+  m100: { lengthM: 100 },
+  m250: { lengthM: 250 },
+  m500: { lengthM: 500 },
+  m1000: { lengthM: 1000 },
+  nm: { lengthM: METRES_PER_NM },
+};
+
+/** Below quality B a window shorter than this (s) says more about the receiver than about the rider. */
+export const SHORT_WINDOW_S = 5;
+export const TENS = 5;
+
+export type BestFigures = {
+  readonly bests: Readonly<Record<BestKey, Best | Withheld>>;
+  readonly bestTens: readonly Best[];
+  readonly bestTensMeanMps: number | null;
+};
+
+/** Longest window (s) whose maximum is looked at for excess: over longer ones few rival and the error is small. */
+const EXCESS_WINDOW_S = 10;
+
+/** The best with the expected excess of a maximum taken off where that is larger than its standard error. */
+function withoutExcess(best: Best, curve: WayCurve, timeS: number): Best {
+  const excess = excessOfMaximum(rivalSpeeds(curve, timeS, best.speedMps - 3 * best.seMps), best.seMps);
+  return excess > best.seMps ? { ...best, speedMps: best.speedMps - excess } : best;
+}
+
+/**
+ * The fastest mean speeds of a stretch over fixed times and distances, each with its standard error.
+ *
+ * Exact over the way curve of the series: straight pieces between its samples. The 2 s window may also begin between
+ * them, every quarter of a second, on the integral of the stiff smoother's speed. A window never spans a gap and never
+ * leaves the water. Up to 10 s the expected excess of the maximum is taken off where it is larger than the standard
+ * error (so a part with fewer rivals may show a little more than the whole). Withheld: `too_short` when no
+ * unbroken stretch is long enough; `quality` for windows under 5 s when the recording is graded below B.
+ * In: the series, the stretch (UTC ms), the grade. Out: see `BestFigures`; `bestTens` are up to five 10 s windows
+ * that do not overlap, fastest first, uncorrected, and their mean when there are five.
+ */
+export function bestFigures(series: SpeedSeries, stretch: Stretch, grade: QualityGrade): BestFigures {
+  const curve = wayCurveOf(series, stretch);
+  const withSe = (window: Window): Best => ({ ...window, seMps: meanSpeedSe(series, window) });
+  const find = (key: BestKey): Best | Withheld => {
+    const wanted = BEST_WINDOWS[key];
+    if ("lengthM" in wanted) {
+      const found = fastestOverDistance(curve, wanted.lengthM);
+      return found ? withSe(found) : { withheld: "too_short" };
+    }
+    const { timeS } = wanted;
+    const short = timeS < SHORT_WINDOW_S;
+    if (short && grade > "B") return { withheld: "quality" };
+    const on = short ? withWayFromSpeed(curve, series) : curve;
+    const found = short ? fastestBetweenKnots(on, timeS) : fastestOverTime(on, timeS);
+    if (!found) return { withheld: "too_short" };
+    return timeS <= EXCESS_WINDOW_S ? withoutExcess(withSe(found), on, timeS) : withSe(found);
+  };
+  const tens = fastestSeparate(curve, 10, TENS).map(withSe);
+  return {
+    bests: {
+      s2: find("s2"),
+      s10: find("s10"),
+      s60: find("s60"),
+      s600: find("s600"),
+      s3600: find("s3600"),
+      m100: find("m100"),
+      m250: find("m250"),
+      m500: find("m500"),
+      m1000: find("m1000"),
+      nm: find("nm"),
+    },
+    bestTens: tens,
+    bestTensMeanMps: tens.length === TENS ? tens.reduce((sum, ten) => sum + ten.speedMps, 0) / TENS : null,
+  };
+}
