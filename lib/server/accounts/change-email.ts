@@ -5,8 +5,9 @@ import { env } from "@/lib/server/env/env";
 import { alreadyHereMessage, confirmMessage } from "@/lib/server/mail/messages";
 import { queueMail } from "@/lib/server/mail/queue-mail";
 import { AppError } from "@/lib/errors/app-error";
+import { parseInput } from "@/lib/server/input/parse-input";
 import { fetchUser, findByEmail, issueEmailToken, reauthenticate, takeMailTurn } from "./internal";
-import { emailField, passwordField, readInput } from "./schemas";
+import { emailField, passwordField } from "./schemas";
 
 const schema = z.strictObject({ email: emailField, currentPassword: passwordField });
 
@@ -16,7 +17,7 @@ const schema = z.strictObject({ email: emailField, currentPassword: passwordFiel
  */
 export async function changeEmail(ctx: Context, input: unknown): Promise<void> {
   const userId = requireUserId(ctx);
-  const { email, currentPassword } = readInput(schema, input);
+  const { email, currentPassword } = parseInput(schema, input);
   const row = await fetchUser(ctx.db.read, userId);
   if (email === row.email) {
     const text = "This is your address already.";

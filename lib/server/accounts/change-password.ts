@@ -12,8 +12,9 @@ import { logEvent } from "@/lib/server/context/log";
 import { env } from "@/lib/server/env/env";
 import { passwordChangedMessage } from "@/lib/server/mail/messages";
 import { queueMail } from "@/lib/server/mail/queue-mail";
+import { parseInput } from "@/lib/server/input/parse-input";
 import { dropEmailTokens, fetchUser, reauthenticate } from "./internal";
-import { newPasswordField, passwordField, readInput } from "./schemas";
+import { newPasswordField, passwordField } from "./schemas";
 
 const schema = z.strictObject({
   currentPassword: passwordField,
@@ -31,7 +32,7 @@ export async function changePassword(
   device: string,
 ): Promise<{ token: string; ended: number }> {
   const userId = requireUserId(ctx);
-  const { currentPassword, newPassword, endOthers } = readInput(schema, input);
+  const { currentPassword, newPassword, endOthers } = parseInput(schema, input);
   const row = await fetchUser(ctx.db.read, userId);
   const problem = passwordProblem(newPassword, row);
   if (problem !== null) throw new AppError("validation", problem, { fields: { newPassword: problem } });

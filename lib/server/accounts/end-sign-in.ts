@@ -4,7 +4,7 @@ import { authSession } from "@/db/schema/auth-session";
 import { AppError } from "@/lib/errors/app-error";
 import { audit } from "@/lib/server/context/audit";
 import { requireUserId, type Context } from "@/lib/server/context/context";
-import { readInput } from "./schemas";
+import { parseInput } from "@/lib/server/input/parse-input";
 
 const schema = z.strictObject({ id: z.string().regex(/^[0-9a-f]{64}$/) });
 
@@ -15,7 +15,7 @@ const schema = z.strictObject({ id: z.string().regex(/^[0-9a-f]{64}$/) });
  */
 export async function endSignIn(ctx: Context, input: unknown): Promise<void> {
   const userId = requireUserId(ctx);
-  const { id } = readInput(schema, input);
+  const { id } = parseInput(schema, input);
   await ctx.db.write(async (tx) => {
     const ended = await tx
       .delete(authSession)

@@ -5,14 +5,15 @@ import { logEvent } from "@/lib/server/context/log";
 import { env } from "@/lib/server/env/env";
 import { resetMessage } from "@/lib/server/mail/messages";
 import { queueMail } from "@/lib/server/mail/queue-mail";
+import { parseInput } from "@/lib/server/input/parse-input";
 import { findByEmail, issueEmailToken, logId, takeMailTurn } from "./internal";
-import { emailField, readInput } from "./schemas";
+import { emailField } from "./schemas";
 
 const schema = z.strictObject({ email: emailField });
 
 /** Sends a link to set a new password, when the address has an account. Whether it does is not told. */
 export async function requestPasswordReset(ctx: Context, input: unknown): Promise<void> {
-  const { email } = readInput(schema, input);
+  const { email } = parseInput(schema, input);
   const nowMs = ctx.nowMs();
   await ctx.db.write(async (tx) => {
     await takeMailTurn(tx, ctx, email);

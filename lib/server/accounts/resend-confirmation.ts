@@ -5,8 +5,9 @@ import { logEvent } from "@/lib/server/context/log";
 import { env } from "@/lib/server/env/env";
 import { confirmMessage } from "@/lib/server/mail/messages";
 import { queueMail } from "@/lib/server/mail/queue-mail";
+import { parseInput } from "@/lib/server/input/parse-input";
 import { findByEmail, issueEmailToken, logId, takeMailTurn } from "./internal";
-import { emailField, readInput } from "./schemas";
+import { emailField } from "./schemas";
 
 const schema = z.strictObject({ email: emailField });
 
@@ -15,7 +16,7 @@ const schema = z.strictObject({ email: emailField });
  * not told.
  */
 export async function resendConfirmation(ctx: Context, input: unknown): Promise<void> {
-  const { email } = readInput(schema, input);
+  const { email } = parseInput(schema, input);
   const nowMs = ctx.nowMs();
   await ctx.db.write(async (tx) => {
     await takeMailTurn(tx, ctx, email);

@@ -12,8 +12,9 @@ import { env } from "@/lib/server/env/env";
 import { passwordChangedMessage } from "@/lib/server/mail/messages";
 import { queueMail } from "@/lib/server/mail/queue-mail";
 import { forgetTurns, SIGN_IN_PER_ACCOUNT } from "@/lib/server/throttle/throttle";
+import { parseInput } from "@/lib/server/input/parse-input";
 import { consumeEmailToken, deadLink, fetchUser, findEmailToken } from "./internal";
-import { newPasswordField, readInput, tokenField } from "./schemas";
+import { newPasswordField, tokenField } from "./schemas";
 
 const PURPOSE = "reset_password";
 const schema = z.strictObject({ token: z.unknown(), password: newPasswordField });
@@ -30,7 +31,7 @@ export async function resetPassword(
   input: unknown,
   device: string,
 ): Promise<{ userId: string; token: string }> {
-  const { password, ...rest } = readInput(schema, input);
+  const { password, ...rest } = parseInput(schema, input);
   const parsed = tokenField.safeParse(rest.token);
   if (!parsed.success) throw deadLink(PURPOSE);
   const link = { token: parsed.data, purpose: PURPOSE, nowMs: ctx.nowMs() } as const;

@@ -1,5 +1,5 @@
 import { z } from "zod";
-import { AppError } from "@/lib/errors/app-error";
+import { parseDecimal } from "@/lib/display/parse-decimal";
 
 /** Long enough for 128 characters of any kind; longer input is not worth hashing. */
 const PASSWORD_INPUT_MAX = 2000;
@@ -57,31 +57,11 @@ export const weightField = z
   .max(40, { error: WEIGHT_TEXT })
   .optional()
   .transform((text, issue): number | null => {
-    const bare = (text ?? "")
-      .replace(/[\s\u00a0]/g, "")
-      .replace(/kg$/i, "")
-      .replace(",", ".");
-    if (bare === "") return null;
-    const value = /^\d{1,3}(\.\d+)?$/.test(bare) ? Number(bare) : Number.NaN;
-    if (value >= WEIGHT_KG_MIN && value <= WEIGHT_KG_MAX) return value;
+    if (text === undefined || text.trim() === "") return null;
+    const value = parseDecimal(text, "kg");
+    if (value !== null && value >= WEIGHT_KG_MIN && value <= WEIGHT_KG_MAX) return value;
     issue.addIssue({ code: "custom", message: WEIGHT_TEXT });
     return z.NEVER;
   });
 
 export const tokenField = z.string().regex(/^[\w-]{43}$/);
-
-/**
- * Reads a verb's input.
- *
- * @throws AppError `validation` with a sentence for each field.
- */
-export function readInput<T>(schema: z.ZodType<T>, input: unknown): T {
-  const parsed = schema.safeParse(input);
-  if (parsed.success) return parsed.data;
-  const fields: Record<string, string> = {};
-  for (const issue of parsed.error.issues) {
-    const name = String(issue.path[0] ?? "");
-    if (name !== "" && fields[name] === undefined) fields[name] = issue.message;
-  }
-  throw new AppError("validation", "Some of what was entered cannot be used yet.", { fields });
-}

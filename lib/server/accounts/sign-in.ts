@@ -16,8 +16,9 @@ import {
   takeTurn,
   tooSoon,
 } from "@/lib/server/throttle/throttle";
+import { parseInput } from "@/lib/server/input/parse-input";
 import { findByEmail, logId } from "./internal";
-import { emailField, passwordField, readInput } from "./schemas";
+import { emailField, passwordField } from "./schemas";
 
 const schema = z.strictObject({ email: emailField, password: passwordField });
 
@@ -47,7 +48,7 @@ export async function signIn(
   input: unknown,
   device: string,
 ): Promise<{ userId: string; token: string }> {
-  const { email, password } = readInput(schema, input);
+  const { email, password } = parseInput(schema, input);
   await takeSignInTurn(ctx, email);
   const row = await findByEmail(ctx.db.read, email);
   const isRight = await verifyPassword(row?.passwordHash ?? null, password);

@@ -10,8 +10,9 @@ import { logEvent } from "@/lib/server/context/log";
 import { env } from "@/lib/server/env/env";
 import { alreadyHereMessage, confirmMessage } from "@/lib/server/mail/messages";
 import { queueMail } from "@/lib/server/mail/queue-mail";
+import { parseInput } from "@/lib/server/input/parse-input";
 import { findByEmail, issueEmailToken, logId, takeMailTurn } from "./internal";
-import { emailField, nameField, newPasswordField, readInput, weightField } from "./schemas";
+import { emailField, nameField, newPasswordField, weightField } from "./schemas";
 
 const schema = z.strictObject({
   email: emailField,
@@ -26,7 +27,7 @@ const schema = z.strictObject({
  * here who has an account. Both ways hash a password and write one transaction, so they take the same time.
  */
 export async function signUp(ctx: Context, input: unknown): Promise<void> {
-  const { email, password, name, weight } = readInput(schema, input);
+  const { email, password, name, weight } = parseInput(schema, input);
   const problem = passwordProblem(password, { email, name });
   if (problem !== null) throw new AppError("validation", problem, { fields: { password: problem } });
   const passwordHash = await hashPassword(password);

@@ -3,8 +3,8 @@ import { z } from "zod";
 import { user } from "@/db/schema/user";
 import { audit } from "@/lib/server/context/audit";
 import { requireUserId, type Context } from "@/lib/server/context/context";
+import { parseInput } from "@/lib/server/input/parse-input";
 import { fetchUser } from "./internal";
-import { readInput } from "./schemas";
 
 const schema = z.strictObject({
   theme: z.enum(["system", "light", "dark"], { error: "Choose how the pages look." }),
@@ -13,7 +13,7 @@ const schema = z.strictObject({
 /** Changes whether one's pages are light, dark, or follow the device. */
 export async function updateTheme(ctx: Context, input: unknown): Promise<void> {
   const userId = requireUserId(ctx);
-  const { theme } = readInput(schema, input);
+  const { theme } = parseInput(schema, input);
   await ctx.db.write(async (tx) => {
     await fetchUser(tx, userId);
     await tx.update(user).set({ theme }).where(eq(user.id, userId));

@@ -1,0 +1,16 @@
+import Link from "next/link";
+import { isOutboxOpen } from "@/lib/server/mail/list-outbox";
+import { env } from "@/lib/server/env/env";
+
+/** Where mail is to be found when none leaves this machine. */
+export function OutboxHint() {
+  if (!isOutboxOpen(env()) || env().smtpUrl !== null) return null;
+  return (
+    <p className="mt-6 max-w-xl">
+      No mail leaves this machine.{" "}
+      <Link href="/dev/outbox" className="link inline-flex min-h-6 items-center">
+        Read it in the outbox
+      </Link>
+    </p>
+  );
+}
