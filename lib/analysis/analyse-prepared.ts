@@ -1,4 +1,4 @@
-import { quantile } from "@/lib/numeric/quantile";
+import { median, quantile } from "@/lib/numeric/quantile";
 import type { Fixes } from "@/lib/track/fixes";
 import type { PreparedTrack } from "@/lib/track/prepared-track";
 import type { SmoothedTrack } from "@/lib/track/smoothed-track";
@@ -10,24 +10,32 @@ import { speedSeriesOf } from "./speed-series-of";
 import { summarise } from "./summarise";
 import { cumulatedWayM, foilMask } from "./way";
 
-/** Holes between fixes that a recording makes of itself are not gaps: its usual step and a little more, s. */
-const GAP_S_MIN = 3.5;
-const GAP_S_MAX = 8;
+/** A hole in the recording is a gap when it is longer than this (s) and than this many usual steps: metrics 2. */
+const GAP_S_MIN = 5;
+const GAP_STEPS_MIN = 4;
 
-function gapLimitS(fixes: Fixes): number {
+/** A dropout is a hole longer than this (s) and than nearly all steps of the recording. Trials, no source. */
+const DROPOUT_S_MIN = 3.5;
+
+type HoleLimits = { readonly gapLimitS: number; readonly dropoutLimitS: number };
+
+function holeLimits(fixes: Fixes): HoleLimits {
   const stride = Math.max(1, Math.floor(fixes.count / 5000));
   const steps: number[] = [];
   for (let i = 1; i < fixes.count; i += stride) {
     steps.push(((fixes.timeMs[i] ?? 0) - (fixes.timeMs[i - 1] ?? 0)) / 1000);
   }
-  const usual = steps.length > 0 ? quantile(steps, 0.97) : 1;
-  return Math.max(GAP_S_MIN, Math.min(GAP_S_MAX, usual + 0.6));
+  if (steps.length === 0) return { gapLimitS: GAP_S_MIN, dropoutLimitS: DROPOUT_S_MIN };
+  const gapLimitS = Math.max(GAP_S_MIN, GAP_STEPS_MIN * median(steps));
+  const dropoutLimitS = Math.max(DROPOUT_S_MIN, quantile(steps, 0.97) + 0.6);
+  return { gapLimitS, dropoutLimitS: Math.min(gapLimitS, dropoutLimitS) };
 }
 
 /** The analysis of a track that is prepared already; see `analyse`. */
 export function analysePrepared(prepared: PreparedTrack, options: AnalysisOptions): Analysis {
   const track: SmoothedTrack = prepared.smoothed;
-  const { spans } = findOnFoil(track, options);
+  const { timeMs, elevationM } = prepared.cleaned;
+  const { spans } = findOnFoil(track, options, elevationM && { timeMs, elevationM });
   const onFoil = foilMask(track, spans);
   const wayM = cumulatedWayM(track, onFoil);
   const { bumpRides, lulls } = findBumps(track, spans, wayM);
@@ -36,7 +44,7 @@ export function analysePrepared(prepared: PreparedTrack, options: AnalysisOption
     wayM,
     onFoil,
     rateHz: prepared.quality.rateHz,
-    gapLimitS: gapLimitS(prepared.cleaned),
+    ...holeLimits(prepared.cleaned),
   });
   const analysed = {
     series,

@@ -1,5 +1,5 @@
 import type { QualityGrade } from "@/lib/track/quality";
-import type { SpeedSeries, Stretch } from "@/lib/track/speed-series";
+import { FLAG_DROPOUT, FLAG_GAP, type SpeedSeries, type Stretch } from "@/lib/track/speed-series";
 import { METRES_PER_NM } from "@/lib/units/length";
 import type { Best, BestKey, Withheld } from "./analysis";
 import { excessOfMaximum } from "./excess-of-maximum";
@@ -54,30 +54,31 @@ function withoutExcess(best: Best, curve: WayCurve, timeS: number): Best {
  *
  * Exact over the way curve of the series: straight pieces between its samples. The 2 s window may also begin between
  * them, every quarter of a second, on the integral of the stiff smoother's speed. A window never spans a gap and never
- * leaves the water. Up to 10 s the expected excess of the maximum is taken off where it is larger than the standard
+ * leaves the water; up to 10 s it holds no dropout either. Up to 10 s the expected excess of the maximum is taken off where it is larger than the standard
  * error (so a part with fewer rivals may show a little more than the whole). Withheld: `too_short` when no
  * unbroken stretch is long enough; `quality` for windows under 5 s when the recording is graded below B.
  * In: the series, the stretch (UTC ms), the grade. Out: see `BestFigures`; `bestTens` are up to five 10 s windows
  * that do not overlap, fastest first, uncorrected, and their mean when there are five.
  */
 export function bestFigures(series: SpeedSeries, stretch: Stretch, grade: QualityGrade): BestFigures {
-  const curve = wayCurveOf(series, stretch);
+  const long = wayCurveOf(series, stretch);
+  const close = wayCurveOf(series, stretch, FLAG_GAP | FLAG_DROPOUT);
   const withSe = (window: Window): Best => ({ ...window, seMps: meanSpeedSe(series, window) });
   const find = (key: BestKey): Best | Withheld => {
     const wanted = BEST_WINDOWS[key];
     if ("lengthM" in wanted) {
-      const found = fastestOverDistance(curve, wanted.lengthM);
+      const found = fastestOverDistance(long, wanted.lengthM);
       return found ? withSe(found) : { withheld: "too_short" };
     }
     const { timeS } = wanted;
     const short = timeS < SHORT_WINDOW_S;
     if (short && grade > "B") return { withheld: "quality" };
-    const on = short ? withWayFromSpeed(curve, series) : curve;
+    const on = short ? withWayFromSpeed(close, series) : timeS <= EXCESS_WINDOW_S ? close : long;
     const found = short ? fastestBetweenKnots(on, timeS) : fastestOverTime(on, timeS);
     if (!found) return { withheld: "too_short" };
     return timeS <= EXCESS_WINDOW_S ? withoutExcess(withSe(found), on, timeS) : withSe(found);
   };
-  const tens = fastestSeparate(curve, 10, TENS).map(withSe);
+  const tens = fastestSeparate(close, 10, TENS).map(withSe);
   return {
     bests: {
       s2: find("s2"),

@@ -1,3 +1,4 @@
+import { quantile } from "@/lib/numeric/quantile";
 import type { SmoothedTrack } from "@/lib/track/smoothed-track";
 import type { FoilSpan } from "./on-foil";
 
@@ -12,6 +13,18 @@ const QUICK_S = 12;
 const QUICK_SHARE_MIN = 0.5;
 /** Faster than this on average is a road or a railway, not a foil (about 33 kn). Common practice, no source. */
 const MEAN_MPS_MAX = 17;
+/** No foil under a person has gone so fast for a moment (about 49 kn). Common practice, no source. */
+const TOP_MPS_MAX = 25;
+/** A hole between fixes longer than this (s) hides what happened; more of it than these shares proves nothing. */
+const HIDDEN_S = 6;
+const HIDDEN_SHARE_OF_SPAN_MAX = 0.5;
+const HIDDEN_SHARE_OF_ALL_MAX = 0.4;
+/**
+ * Water is level: heights within the middle 90 % of fixes on foil spread no wider than a receiver and a drifting
+ * barometer make them (m). A receiver's height is good to about 13 m, 95 % (GPS Standard Positioning Service
+ * Performance Standard 2020, from memory); recordings of modelled and recorded vessels spread 5-20 m.
+ */
+export const HEIGHT_SPREAD_M_MAX = 60;
 /** A foil surges and sinks; a hull under way does not: spread of speed about its own 20 s mean, m/s. */
 const LIVELY_MPS = 0.3;
 
@@ -98,30 +111,77 @@ function liveliness(track: SmoothedTrack, span: FoilSpan): number {
   return seen > 0 ? Math.sqrt(Math.max(0, squares / seen)) : 0;
 }
 
-const isTooFast = (track: SmoothedTrack, span: FoilSpan): boolean =>
-  meanSpeed(track, span.start, span.end) > MEAN_MPS_MAX;
+type Seen = { readonly hiddenS: number; readonly timeS: number; readonly topMps: number };
+
+function seenOf(track: SmoothedTrack, span: FoilSpan): Seen {
+  let hidden = 0;
+  let topMps = 0;
+  const first = Math.ceil(span.start);
+  const last = Math.floor(span.end);
+  for (let i = first; i <= last; i++) {
+    if ((track.gapS[i] ?? 0) > HIDDEN_S) hidden++;
+    topMps = Math.max(topMps, track.speedMps[i] ?? 0);
+  }
+  const stepS = track.stepMs / 1000;
+  return { hiddenS: hidden * stepS, timeS: (last - first + 1) * stepS, topMps };
+}
+
+/** Spans that were watched and that a foil could have ridden; none when most of the session was not watched. */
+function plausibleSpans(track: SmoothedTrack, spans: readonly FoilSpan[]): readonly FoilSpan[] {
+  const judged = spans.map((span) => ({ span, ...seenOf(track, span) }));
+  const hiddenS = judged.reduce((sum, one) => sum + one.hiddenS, 0);
+  const timeS = judged.reduce((sum, one) => sum + one.timeS, 0);
+  if (hiddenS > HIDDEN_SHARE_OF_ALL_MAX * timeS) return [];
+  return judged
+    .filter((one) => one.hiddenS <= HIDDEN_SHARE_OF_SPAN_MAX * one.timeS && one.topMps <= TOP_MPS_MAX)
+    .map((one) => one.span)
+    .filter((span) => meanSpeed(track, span.start, span.end) <= MEAN_MPS_MAX);
+}
+
+/** Spread of the middle 90 % of recorded heights inside the spans (m); 0 when the file has none there. */
+function heightSpreadM(track: SmoothedTrack, spans: readonly FoilSpan[], heights: Heights | null): number {
+  if (!heights) return 0;
+  const inside: number[] = [];
+  let k = 0;
+  for (const span of spans) {
+    const startMs = track.startMs + span.start * track.stepMs;
+    const endMs = track.startMs + span.end * track.stepMs;
+    while (k < heights.timeMs.length && (heights.timeMs[k] ?? Infinity) < startMs) k++;
+    for (; k < heights.timeMs.length && (heights.timeMs[k] ?? Infinity) <= endMs; k++) {
+      const height = heights.elevationM[k] ?? NaN;
+      if (Number.isFinite(height)) inside.push(height);
+    }
+  }
+  return inside.length > 0 ? quantile(inside, 0.95) - quantile(inside, 0.05) : 0;
+}
+
+/** Recorded heights by time, ascending. */
+export type Heights = { readonly timeMs: Float64Array; readonly elevationM: Float64Array };
 
 /**
  * The spans that foiling explains, out of those that are merely fast enough.
  *
  * The whole session must show the jump between hull speed and flying speed at half of its seen take-offs and
  * touchdowns or more: else (a yacht, a kayak, a ferry) nothing is kept, unless no edge was recorded at all and the
- * speed is as lively as bumps make it. A single span that begins and ends slowly and runs as steadily as a boat
- * under way is left out too (the tow home), and so is one that is faster than any foil on average.
- * In: the track, spans by sample index, the session's stall speed (m/s). Out: a part of the spans, in order.
+ * speed is as lively as bumps make it. Nothing is kept when the heights climb and fall (a hill) or when most of the time
+ * lies in holes of the recording. A single span is left out when it begins and ends slowly and runs as steadily as a
+ * boat under way (the tow home), when it is faster than any foil, or when half of it was not recorded.
+ * In: the track, spans by sample index, the session's stall speed (m/s), recorded heights or null. Out: a part of
+ * the spans, in order.
  */
 export function keepFoiling(
   track: SmoothedTrack,
   spans: readonly FoilSpan[],
   stallMps: number,
+  heights: Heights | null = null,
 ): readonly FoilSpan[] {
-  const judged = spans
-    .filter((span) => !isTooFast(track, span))
-    .map((span) => ({
-      span,
-      takeoff: edgeOf(track, span.start, -1, stallMps),
-      touchdown: edgeOf(track, span.end, 1, stallMps),
-    }));
+  const plausible = plausibleSpans(track, spans);
+  if (heightSpreadM(track, plausible, heights) > HEIGHT_SPREAD_M_MAX) return [];
+  const judged = plausible.map((span) => ({
+    span,
+    takeoff: edgeOf(track, span.start, -1, stallMps),
+    touchdown: edgeOf(track, span.end, 1, stallMps),
+  }));
   const edges = judged.flatMap((one) => [one.takeoff, one.touchdown]).filter((edge) => edge !== "unseen");
   const quick = edges.filter((edge) => edge === "quick").length;
   if (edges.length > 0 && quick < QUICK_SHARE_MIN * edges.length) return [];

@@ -1,6 +1,6 @@
 import type { SmoothedTrack } from "@/lib/track/smoothed-track";
 import type { AnalysisOptions } from "./analysis";
-import { keepFoiling } from "./foil-signature";
+import { keepFoiling, type Heights } from "./foil-signature";
 import { placeEdges } from "./foil-edges";
 import { firstStallSpeed, stallSpeedFrom, THRESHOLD_OVER_STALL } from "./flying-speed";
 import { median } from "@/lib/numeric/quantile";
@@ -105,11 +105,15 @@ function joinShortBreaks(spans: readonly FoilSpan[], track: SmoothedTrack): Foil
  * placed afterwards by what the speed does there.
  *
  * Only time on the water counts. At least 3 s on; breaks under 2 s do not end a segment. A track without the
- * signature of foiling (see `keepFoiling`) has none, however fast it is.
+ * signature of foiling (see `keepFoiling`, which may look at the recorded heights) has none, however fast it is.
  * Out: spans in order, not overlapping, as fractional sample indices; confidence 0 to 1 is the mean of
  * tanh(margin / 2) over the span, the margin being the log-odds of the path.
  */
-export function findOnFoil(track: SmoothedTrack, options: AnalysisOptions): OnFoil {
+export function findOnFoil(
+  track: SmoothedTrack,
+  options: AnalysisOptions,
+  heights: Heights | null = null,
+): OnFoil {
   if (track.count < 2) return { spans: [], stallMps: firstStallSpeed(options.minimumFlyingSpeedMps) };
   const { oddsOn, runs, stallMps } = adaptedPath(track, options);
   const placed = runs.map((run) => ({
@@ -119,5 +123,5 @@ export function findOnFoil(track: SmoothedTrack, options: AnalysisOptions): OnFo
   const spans = joinShortBreaks(placed, track).filter(
     (span) => ((span.end - span.start) * track.stepMs) / 1000 >= MIN_ON_FOIL_S,
   );
-  return { spans: keepFoiling(track, spans, stallMps), stallMps };
+  return { spans: keepFoiling(track, spans, stallMps, heights), stallMps };
 }

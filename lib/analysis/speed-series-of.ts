@@ -1,4 +1,4 @@
-import { FLAG_GAP, FLAG_ON_FOIL, FLAG_ON_WATER, type SpeedSeries } from "@/lib/track/speed-series";
+import { FLAG_DROPOUT, FLAG_GAP, FLAG_ON_FOIL, FLAG_ON_WATER, type SpeedSeries } from "@/lib/track/speed-series";
 import type { SmoothedTrack } from "@/lib/track/smoothed-track";
 
 /** Slower than this there is no course worth showing (m/s). Common practice, no source. */
@@ -27,6 +27,8 @@ export type SeriesSource = {
   readonly rateHz: number;
   /** Holes between fixes longer than this (s) are gaps: no best spans them. */
   readonly gapLimitS: number;
+  /** Holes longer than this (s) are dropouts: no short best spans them. */
+  readonly dropoutLimitS: number;
 };
 
 /**

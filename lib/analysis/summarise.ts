@@ -13,7 +13,7 @@ export const MOVING_MPS_MIN = 0.5;
  * What the smoother's own standard error does not hold of a long way: waves' to-and-fro, edges of the time on the
  * water. Share of the way; found on modelled sessions, no published source.
  */
-const WAY_SHARE_SE = 0.004;
+const WAY_SHARE_SE = 0.008;
 const GLIDE_SEED = 20250614;
 
 const timeS = (stretch: Stretch): number => (stretch.endMs - stretch.startMs) / 1000;

@@ -65,7 +65,7 @@ const LULL_ORDER: KeyOrder<Lull> = { startMs: 0, endMs: 1, distanceM: 2, heightL
  * packed with gzip, series blob to the end. In the JSON the lists are rows of numbers in a fixed order, rounded to thousandths
  * (of a millisecond, a metre, a m/s, a degree): an hour of bump rides then costs about 6 kB.
  */
-export function encodeTrackPayload(parts: TrackPayloadParts): Uint8Array {
+export function encodeTrackPayload(parts: TrackPayloadParts): Uint8Array<ArrayBuffer> {
   const head: Head = {
     segments: toRows(parts.segments, SEGMENT_ORDER),
     bumpRides: toRows(parts.bumpRides, BUMP_RIDE_ORDER),

@@ -12,12 +12,12 @@ export type WayCurve = {
   readonly runs: readonly Run[];
 };
 
-/** Runs of samples first ... last on the water without a gap. */
-function usableRuns(flags: Uint8Array, first: number, last: number): Run[] {
+/** Runs of samples first ... last on the water without any of the breaks. */
+function usableRuns(flags: Uint8Array, first: number, last: number, breaks: number): Run[] {
   const found: Run[] = [];
   let from = -1;
   for (let i = first; i <= last + 1; i++) {
-    const usable = i <= last && ((flags[i] ?? 0) & (FLAG_GAP | FLAG_ON_WATER)) === FLAG_ON_WATER;
+    const usable = i <= last && ((flags[i] ?? 0) & (breaks | FLAG_ON_WATER)) === FLAG_ON_WATER;
     if (usable && from < 0) from = i;
     else if (!usable && from >= 0) {
       found.push({ from, to: i - 1 });
@@ -28,13 +28,13 @@ function usableRuns(flags: Uint8Array, first: number, last: number): Run[] {
 }
 
 /**
- * The curve of a series inside a stretch, knots at its samples: times on the water without a gap. The ends of
- * the stretch are taken inwards to whole samples.
+ * The curve of a series inside a stretch, knots at its samples: times on the water without a gap (`breaks`:
+ * the flags that end a run). The ends of the stretch are taken inwards to whole samples.
  */
-export function wayCurveOf(series: SpeedSeries, stretch: Stretch): WayCurve {
+export function wayCurveOf(series: SpeedSeries, stretch: Stretch, breaks: number = FLAG_GAP): WayCurve {
   const first = Math.max(0, Math.ceil((stretch.startMs - series.startMs) / series.stepMs));
   const last = Math.min(series.count - 1, Math.floor((stretch.endMs - series.startMs) / series.stepMs));
-  const runs = usableRuns(series.flags, first, last);
+  const runs = usableRuns(series.flags, first, last, breaks);
   return { startMs: series.startMs, stepMs: series.stepMs, wayM: series.distanceM, runs };
 }
 
