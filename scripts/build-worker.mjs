@@ -1,20 +1,29 @@
-// Bundles the analysis worker to build/, from where the pool loads it by path.
-import { existsSync } from "node:fs";
+// Bundles the analysis worker, by default to build/, from where the pool loads it by path.
+import path from "node:path";
+import { fileURLToPath } from "node:url";
 import { build } from "esbuild";
 
-const entry = "lib/worker/analysis-worker.ts";
-if (existsSync(entry)) {
+const root = path.resolve(import.meta.dirname, "..");
+
+/** Bundles the worker into one file and gives back its path. */
+export async function buildWorker(outfile = path.join(root, "build/analysis-worker.mjs")) {
   await build({
-    entryPoints: [entry],
-    outfile: "build/analysis-worker.mjs",
+    absWorkingDir: root,
+    entryPoints: ["lib/worker/analysis-worker.ts"],
+    outfile,
     bundle: true,
     platform: "node",
     format: "esm",
     target: "node20",
-    sourcemap: "inline",
+    sourcemap: "linked",
+    // Names in stack traces; the rest is never read by people.
+    keepNames: true,
     logLevel: "warning",
     banner: {
       js: 'import { createRequire } from "node:module"; const require = createRequire(import.meta.url);',
     },
   });
+  return outfile;
 }
+
+if (process.argv[1] === fileURLToPath(import.meta.url)) await buildWorker();

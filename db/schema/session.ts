@@ -1,4 +1,4 @@
-import { index, integer, real, sqliteTable, text } from "drizzle-orm/sqlite-core";
+import { index, integer, real, sqliteTable, text, uniqueIndex } from "drizzle-orm/sqlite-core";
 import { createdAtColumn, idColumn } from "./columns";
 import { upload } from "./upload";
 import { user } from "./user";
@@ -26,6 +26,11 @@ export const session = sqliteTable(
     timeZone: text("time_zone").notNull(),
     startMs: integer("start_ms").notNull(),
     endMs: integer("end_ms").notNull(),
+    /** Where it began and ended on the water, for titles by place name. Degrees WGS84. */
+    startLatDeg: real("start_lat_deg"),
+    startLonDeg: real("start_lon_deg"),
+    endLatDeg: real("end_lat_deg"),
+    endLonDeg: real("end_lon_deg"),
     trimStartMs: integer("trim_start_ms"),
     trimEndMs: integer("trim_end_ms"),
     windFromDeg: real("wind_from_deg"),
@@ -44,6 +49,7 @@ export const session = sqliteTable(
   },
   (table) => [
     index("session_owner_start").on(table.ownerId, table.startMs),
-    index("session_upload").on(table.uploadId),
+    // One track of a file becomes one session, however often it is asked for.
+    uniqueIndex("session_upload_entry").on(table.uploadId, table.entryName),
   ],
 );
