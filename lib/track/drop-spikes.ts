@@ -12,6 +12,8 @@ const STEP_S_MAX = 20;
 const BLOCK_S = 6.5;
 const BLOCK_S_AFTER_LEAP = 300;
 const LEAP_MPS = 60;
+/** No local velocity is above this, so that short steps of fast recordings need no closer look. */
+const FASTEST_MPS = 40;
 /** Fixes looked at in all searches together: bounds the time on a file that is nothing but leaps. */
 const SEARCH_BUDGET = 3_000_000;
 
@@ -38,7 +40,7 @@ export function dropSpikes(draft: FixDraft, medianStepS: number): FixDraft {
   const search = { path, medianStepS, reachS: Math.max(4, 4 * medianStepS), budget: SEARCH_BUDGET };
   const before: Velocity = { east: 0, north: 0 };
   for (let i = 1; i < count; i++) {
-    const jumpM = departure(path, i, -1, before, search.reachS);
+    const jumpM = departure(search, i, before);
     if (Number.isNaN(jumpM)) continue;
     const end = blockEnd(search, i, before, jumpM);
     if (end > i) {
@@ -50,14 +52,18 @@ export function dropSpikes(draft: FixDraft, medianStepS: number): FixDraft {
 }
 
 /** How far step i - 1 to i departs from the velocity before it, or NaN when a rider could have done it. */
-function departure(path: TimedPlane, i: number, direction: -1, before: Velocity, reachS: number): number {
+function departure(search: Search, i: number, before: Velocity): number {
+  const { path, reachS } = search;
   const dt = (path.timeS[i] as number) - (path.timeS[i - 1] as number);
   if (dt > STEP_S_MAX) return NaN;
   const dx = (path.xM[i] as number) - (path.xM[i - 1] as number);
   const dy = (path.yM[i] as number) - (path.yM[i - 1] as number);
   const allowed = JUMP_M + JUMP_MPS * Math.min(dt, 4) * Math.min(1, dt > 0.9 ? 1 : dt);
-  localVelocity(path, { from: i - 1, direction, reachS }, before);
-  const off = Math.hypot(dx - before.east * dt, dy - before.north * dt);
+  if (Math.sqrt(dx * dx + dy * dy) + FASTEST_MPS * dt < allowed) return NaN;
+  localVelocity(path, { from: i - 1, direction: -1, reachS }, before);
+  const ex = dx - before.east * dt;
+  const ey = dy - before.north * dt;
+  const off = Math.sqrt(ex * ex + ey * ey);
   return off > allowed ? off : NaN;
 }
 

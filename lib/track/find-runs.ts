@@ -21,10 +21,9 @@ export function findRuns(path: TimedPlane, medianStepS: number): FixRun[] {
   for (let i = 1; i <= path.count; i++) {
     if (i < path.count) {
       const dt = (path.timeS[i] as number) - (path.timeS[i - 1] as number);
-      const step = Math.hypot(
-        (path.xM[i] as number) - (path.xM[i - 1] as number),
-        (path.yM[i] as number) - (path.yM[i - 1] as number),
-      );
+      const dx = (path.xM[i] as number) - (path.xM[i - 1] as number);
+      const dy = (path.yM[i] as number) - (path.yM[i - 1] as number);
+      const step = Math.sqrt(dx * dx + dy * dy);
       if (dt <= holeS && !(step > LEAP_M && step > LEAP_MPS * dt)) continue;
     }
     found.push({ from, to: i - 1 });

@@ -20,6 +20,8 @@ const RIDING_S = 5;
 /** A session in which nothing reaches this for half a minute in all was on some slower craft. */
 const FOIL_MPS = 4;
 const FOIL_S_MIN = 30;
+/** Shorter bursts are noise or a wave's push. */
+const FLIGHT_S_MIN = 10;
 /** A rest this long is a break ashore in the middle of a session, and this long at its ends. */
 const BREAK_S = 100;
 const END_REST_S = 12;
@@ -28,6 +30,8 @@ const SLOW_END_REST_S = 60;
 const HOLE_S = 600;
 const SESSION_S_MIN = 60;
 const RIDE_STRETCH_S_MIN = 100;
+/** Without riding, a stretch shorter than this is a way ashore; a longer one is a paddle, unless somebody drove. */
+const WAY_ASHORE_S = 1200;
 
 /**
  * Finds the times on the water in a smoothed track. Cut off are drives, rests ashore, and the walks next to them. A track on which
@@ -52,13 +56,16 @@ export function findOnWater(track: SmoothedTrack, noiseScaleM: number): OnWater 
 }
 
 function isFoilLike(motion: CoarseMotion, land: Uint8Array): boolean {
-  const fast = runs(
-    motion.count,
-    (i) => !land[i] && !(motion.gapS[i] as number) && (motion.mean6Mps[i] as number) > FOIL_MPS,
-  );
+  const flies = (i: number) =>
+    !land[i] && !(motion.gapS[i] as number) && (motion.mean6Mps[i] as number) > FOIL_MPS;
   let seconds = 0;
-  for (const run of fast) seconds += (run.to - run.from) * motion.stepS;
-  return seconds >= FOIL_S_MIN;
+  let longestS = 0;
+  for (const run of runs(motion.count, flies)) {
+    const lengthS = (run.to - run.from) * motion.stepS;
+    seconds += lengthS;
+    longestS = Math.max(longestS, lengthS);
+  }
+  return seconds >= FOIL_S_MIN && longestS >= FLIGHT_S_MIN;
 }
 
 function foilSessions(
@@ -83,7 +90,9 @@ function foilSessions(
     const riding = runs(run.to - run.from + 1, (i) => rides(run.from + i)).some(
       (r) => (r.to - r.from) * stepS > RIDING_S,
     );
-    if (!riding || (run.to - run.from) * stepS < RIDE_STRETCH_S_MIN) land.fill(1, run.from, run.to + 1);
+    const lengthS = (run.to - run.from) * stepS;
+    const ashore = !riding && (lengthS < WAY_ASHORE_S || found.drives.length > 0);
+    if (ashore || lengthS < RIDE_STRETCH_S_MIN) land.fill(1, run.from, run.to + 1);
   }
   return runs(count, (i) => !land[i])
     .map((run) => withoutWalks(motion, run, found.drives.length > 0))

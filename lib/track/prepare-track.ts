@@ -1,5 +1,6 @@
 import { cleanFixes } from "./clean-fixes";
 import type { Fixes, TrackNote } from "./fixes";
+import { heightRangeM } from "./height-range";
 import { findOnWater, type OnWater } from "./on-water";
 import type { PreparedTrack, PrepareOptions } from "./prepared-track";
 import { qualityReport } from "./quality-grade";
@@ -8,17 +9,22 @@ import { smoothTrack, type Smoothing } from "./smooth-track";
 import type { SmoothedTrack } from "./smoothed-track";
 import type { Stretch } from "./speed-series";
 
+/** Level water shows no such range of height, however poor the receiver (common practice, no source). */
+const LAND_HEIGHT_M = 40;
+
 /**
  * From raw fixes to everything the analysis works on: cleaned, graded, smoothed onto a fine uniform clock, and told from the land. With `trim` the
  * rider's own ends hold: what lies outside is off the water, what lies inside at either end is on it, and only breaks found in
- * between are left out. Never throws on data: without at least two believable fixes the smoothed track is empty, there are no times on the
+ * between are left out. A track whose height changes like a hillside has no times on the water unless the rider sets the ends. Never throws on data: without at least two believable fixes the smoothed track is empty, there are no times on the
  * water, and the quality report says why. Times and memory grow linearly with the fixes.
  */
 export function prepareTrack(fixes: Fixes, options: PrepareOptions): PreparedTrack {
   const cleaned = cleanFixes(fixes);
   const smoothing = smoothTrack(cleaned.fixes, cleaned.medianStepS);
   const water = findOnWater(smoothing.smoothed, smoothing.noiseScaleM);
-  const waterSessions = trimSessions(water.sessions, options.trim, smoothing.smoothed);
+  const rangeM = heightRangeM(cleaned.fixes, speedAt(smoothing.smoothed));
+  const land = rangeM > LAND_HEIGHT_M;
+  const waterSessions = trimSessions(land ? [] : water.sessions, options.trim, smoothing.smoothed);
   markOnWater(smoothing.smoothed, waterSessions);
   const quality = qualityReport(cleaned, smoothing, fixes.count);
   const firstFixMs = cleaned.fixes.timeMs[0] ?? NaN;
@@ -26,15 +32,19 @@ export function prepareTrack(fixes: Fixes, options: PrepareOptions): PreparedTra
   return {
     cleaned: cleaned.fixes,
     smoothed: smoothing.smoothed,
-    window: windowOf(waterSessions, options.trim, smoothing.smoothed),
+    window: windowOf(water.sessions, options.trim, smoothing.smoothed),
     waterSessions,
-    quality: { ...quality, notes: [...quality.notes, ...findings(smoothing, water)] },
+    quality: { ...quality, notes: [...quality.notes, ...findings(smoothing, water, land ? rangeM : NaN)] },
     rawLengthM: rawLengthM(fixes),
     rawFixes: fixes.count,
     rawSegments: fixes.segmentStarts.length,
     firstFixMs,
     lastFixMs,
   };
+}
+
+function speedAt(track: SmoothedTrack): (timeMs: number) => number {
+  return (timeMs) => track.speedMps[Math.round((timeMs - track.startMs) / track.stepMs)] ?? NaN;
 }
 
 /** The detected times inside the rider's own ends, reaching to those ends; the whole stretch when none is inside. */
@@ -73,7 +83,7 @@ function markOnWater(track: SmoothedTrack, sessions: readonly Stretch[]): void {
   }
 }
 
-function findings(smoothing: Smoothing, water: OnWater): TrackNote[] {
+function findings(smoothing: Smoothing, water: OnWater, landHeightM: number): TrackNote[] {
   const notes: TrackNote[] = [];
   const add = (code: string, count: number, text: string) => notes.push({ code, count, text });
   if (smoothing.smoothed.count === 0) {
@@ -85,7 +95,14 @@ function findings(smoothing: Smoothing, water: OnWater): TrackNote[] {
   }
   if (water.drives > 0)
     add("drive", water.drives, water.drives === 1 ? "1 drive cut off." : `${water.drives} drives cut off.`);
-  if (!water.foilLike) {
+  if (landHeightM > 0) {
+    const height = Math.round(landHeightM);
+    add(
+      "land",
+      1,
+      `The height changes by ${height} m, so this is hardly open water. Set the ends by hand if it is.`,
+    );
+  } else if (!water.foilLike) {
     add("slow", 1, "Nothing here moves like a foil: only rest at the ends and driving were cut off.");
   }
   return notes;

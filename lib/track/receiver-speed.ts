@@ -51,7 +51,7 @@ export function receiverVelocity(
   const differences: number[] = [];
   const stride = Math.max(1, Math.floor(count / 20_000));
   for (let i = 0; i < count; i += stride) {
-    const v = Math.hypot(first.vxMps[i] as number, first.vyMps[i] as number);
+    const v = speedAt(first, i);
     const said = speedMps[i] as number;
     if (!(v > 2) || !(said >= 0)) continue;
     ratios.push(said / v);
@@ -65,13 +65,19 @@ export function receiverVelocity(
   return { used: true, velocity: velocitiesAlong(speedMps, first, { noiseScaleM, lagS }), lagS };
 }
 
+function speedAt(first: FirstPass, i: number): number {
+  const vx = first.vxMps[i] as number;
+  const vy = first.vyMps[i] as number;
+  return Math.sqrt(vx * vx + vy * vy);
+}
+
 function findLag(speedMps: Float64Array, first: FirstPass): number {
   let best = { misfit: Infinity, lagS: LAG_S_ASSUMED };
   for (const lagS of LAGS_S) {
     let sum = 0;
     let n = 0;
     for (let i = 1; i + 1 < speedMps.length; i++) {
-      const v = Math.hypot(first.vxMps[i] as number, first.vyMps[i] as number);
+      const v = speedAt(first, i);
       const said = speedMps[i] as number;
       if (!(v >= 3) || !(said >= 1)) continue;
       sum += Math.min(1, (said - v + lagS * (first.alongMps2[i] as number)) ** 2);
@@ -95,7 +101,7 @@ function velocitiesAlong(
   for (let i = 0; i < count; i++) {
     const vx = first.vxMps[i] as number;
     const vy = first.vyMps[i] as number;
-    const v = Math.hypot(vx, vy);
+    const v = Math.sqrt(vx * vx + vy * vy);
     const raw = speedMps[i] as number;
     if (!(raw >= 0) || !Number.isFinite(v) || (raw === 0 && v > 1.2)) continue;
     const said = raw + (v > 1 ? setting.lagS * (first.alongMps2[i] as number) : 0);

@@ -20,7 +20,7 @@ export function netSpeed(xM: Float64Array, yM: Float64Array, halfWidth: number, 
     if (b === a) continue;
     const dx = (xM[b] as number) - (xM[a] as number);
     const dy = (yM[b] as number) - (yM[a] as number);
-    out[k] = Math.hypot(dx, dy) / ((b - a) * stepS);
+    out[k] = Math.sqrt(dx * dx + dy * dy) / ((b - a) * stepS);
   }
   return out;
 }
