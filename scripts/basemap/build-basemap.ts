@@ -1,11 +1,13 @@
 import { mkdir, readdir, rm, stat, writeFile } from "node:fs/promises";
 import { createRequire } from "node:module";
 import path from "node:path";
+import { LAND_ATTRIBUTION } from "@/lib/display/land-attribution";
 import { ArchiveWriter } from "./archive-writer";
 import { claimBuild } from "./build-claim";
 import { cutLand, MAX_ZOOM } from "./cut-land";
 import { LAND_LAYER } from "./encode-tile";
 import { readLand } from "./read-land";
+import { tidyLand } from "./tidy-land";
 
 export type BuildReport =
   | { readonly outcome: "there" }
@@ -41,7 +43,7 @@ export async function buildBasemap(request: BuildRequest): Promise<BuildReport> 
   try {
     await clearLeftovers(archive);
     say("Reading the land of the world.");
-    const land = await readLand(request.land ?? landFile());
+    const land = tidyLand(await readLand(request.land ?? landFile()));
     const writer = new ArchiveWriter();
     let lastTenth = 0;
     const progress = async (share: number) => {
@@ -67,7 +69,7 @@ function metadata(maxZoom: number): Readonly<Record<string, unknown>> {
   return {
     name: "Land",
     description: "Land of the world, accurate to 100 m, for a quiet background under tracks.",
-    attribution: "Land: OpenStreetMap contributors, ODbL",
+    attribution: LAND_ATTRIBUTION,
     vector_layers: [{ id: LAND_LAYER, fields: {}, minzoom: 0, maxzoom: maxZoom }],
   };
 }
