@@ -20,7 +20,12 @@ export type GeodesicLine = {
  * @example
  * Math.round(geodesicLine(0, 0, 0, 1).distanceM); // 111319
  */
-export function geodesicLine(lat1Deg: number, lon1Deg: number, lat2Deg: number, lon2Deg: number): GeodesicLine {
+export function geodesicLine(
+  lat1Deg: number,
+  lon1Deg: number,
+  lat2Deg: number,
+  lon2Deg: number,
+): GeodesicLine {
   if (!Number.isFinite(lat1Deg + lon1Deg + lat2Deg + lon2Deg)) {
     return { distanceM: NaN, bearingDeg: NaN, bearingAtEndDeg: NaN };
   }
@@ -44,7 +49,8 @@ export type Place = { readonly latDeg: number; readonly lonDeg: number };
  * Math.round(destination({ latDeg: 0, lonDeg: 179 }, 90, 222639).lonDeg); // -179
  */
 export function destination(from: Place, bearingDeg: number, distanceM: number): Place {
-  if (!Number.isFinite(from.latDeg + from.lonDeg + bearingDeg + distanceM)) return { latDeg: NaN, lonDeg: NaN };
+  if (!Number.isFinite(from.latDeg + from.lonDeg + bearingDeg + distanceM))
+    return { latDeg: NaN, lonDeg: NaN };
   const r = WGS84.Direct(from.latDeg, from.lonDeg, bearingDeg, distanceM);
   return { latDeg: r.lat2 ?? NaN, lonDeg: wrapLongitudeDeg(r.lon2 ?? NaN) };
 }

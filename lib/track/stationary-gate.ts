@@ -45,7 +45,8 @@ export function gateStationary(columns: FineColumns, stepS: number, noiseScaleM:
   const half = Math.max(1, Math.round(WINDOW_S / stepS / 2));
   const net = netSpeed(columns.xM, columns.yM, half, stepS);
   const mean = movingMean(columns.speedMps, half);
-  const netLimit = restSpeedMps(noiseScaleM);
+  // Wider than what counts as rest ashore: a slip through this gate adds way that was never gone.
+  const netLimit = 0.09 + 0.05 * noiseScaleM;
   const meanLimit = 0.3 + 0.25 * noiseScaleM;
   for (let k = 0; k < net.length; k++) {
     if ((net[k] as number) >= netLimit || (mean[k] as number) >= meanLimit) continue;
