@@ -13,15 +13,15 @@ const EARLIEST_MS = Date.UTC(1980, 0, 6);
 /** A recording from after this century is a clock that is wrong. Common practice, no source. */
 const LATEST_MS = Date.UTC(2100, 0, 1);
 /** A fix at exactly 0, 0 is real only when its neighbours are this near (degrees). Common practice, no source. */
-const ZERO_NEAR_DEG = 0.1;
+const ZERO_NEAR_DEG = 2;
 
 /** What a person, a board and a receiver can be; outside is missing. Common practice, no source. */
-const PLAUSIBLE: Readonly<Record<OptionalColumn, readonly [number, number]>> = {
-  elevationM: [-12_000, 100_000],
-  heartRateBpm: [1, 300],
-  receiverSpeedMps: [0, 500],
-  hdop: [0, 100],
-  satellites: [0, 200],
+const PLAUSIBLE: Readonly<Record<OptionalColumn, { readonly low: number; readonly high: number }>> = {
+  elevationM: { low: -12_000, high: 100_000 },
+  heartRateBpm: { low: 1, high: 300 },
+  receiverSpeedMps: { low: 0, high: 500 },
+  hdop: { low: 0, high: 100 },
+  satellites: { low: 0, high: 200 },
 };
 
 /** Numbers of a fix that was never text (FIT). NaN: missing. */
@@ -118,7 +118,7 @@ export class FixSink {
 
   private set(column: OptionalColumn, row: number, value: number): void {
     if (Number.isNaN(value)) return;
-    const [low, high] = PLAUSIBLE[column];
+    const { low, high } = PLAUSIBLE[column];
     if (value >= low && value <= high) this.columns.set(column, row, value);
     else this.notes.add("bad_values");
   }
@@ -148,7 +148,7 @@ export class FixSink {
   private checked(column: OptionalColumn, text: string): string {
     if (text === "") return text;
     const value = parseDecimal(text);
-    const [low, high] = PLAUSIBLE[column];
+    const { low, high } = PLAUSIBLE[column];
     if (value >= low && value <= high) return text;
     this.notes.add("bad_values");
     return "";
@@ -167,8 +167,13 @@ export class FixSink {
     const { coordinates, heartRate, speed, hdop, satellites } = converted;
     const { columns, drafts } = this;
     for (let index = 0; index < count; index++) {
-      const [lon = Number.NaN, lat = Number.NaN, elevation] = coordinates[index] ?? [];
-      const row = columns.append((drafts[index] as FixDraft).timeMs, lat, lon);
+      const position = coordinates[index] as readonly number[];
+      const elevation = position[2];
+      const row = columns.append(
+        (drafts[index] as FixDraft).timeMs,
+        position[1] as number,
+        position[0] as number,
+      );
       if (elevation !== undefined) columns.set("elevationM", row, elevation);
       if (heartRate !== undefined) columns.set("heartRateBpm", row, heartRate[index] ?? Number.NaN);
       if (speed !== undefined) columns.set("receiverSpeedMps", row, speed[index] ?? Number.NaN);

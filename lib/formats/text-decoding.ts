@@ -2,6 +2,9 @@ import { Buffer, isUtf8 } from "node:buffer";
 
 const DECLARATION = /^<\?xml[^>]{0,200}?encoding\s*=\s*["']([A-Za-z0-9._-]{1,40})["']/;
 
+const NOTHING = new Uint8Array(0);
+const HELD_BACK_MAX = 4096;
+
 type Wide = "utf-16le" | "utf-16be";
 
 /** UTF-16 by its byte order mark, or by the zero byte beside the first ASCII character. */
@@ -25,6 +28,19 @@ function narrowDecoder(head: Uint8Array): TextDecoder {
   } catch {
     return new TextDecoder("windows-1252");
   }
+}
+
+/**
+ * Where to cut a piece: before its last "<" when that is near the end, so that the tokenizer gets whole tags
+ * and its text is one flat string; otherwise before a UTF-8 character that is not whole yet.
+ */
+function cutPlace(bytes: Uint8Array): number {
+  const tag = bytes.lastIndexOf(0x3c);
+  return tag > 0 && bytes.length - tag < HELD_BACK_MAX ? tag : bytes.length - openTail(bytes);
+}
+
+function utf8Text(bytes: Uint8Array): string {
+  return Buffer.from(bytes.buffer, bytes.byteOffset, bytes.length).toString("utf8");
 }
 
 /** How many bytes at the end belong to a UTF-8 character that is not whole yet: 0 to 3. */
@@ -56,7 +72,7 @@ export class TextDecoding {
   private readonly narrow: TextDecoder;
   private readonly declaresUtf8: boolean;
   private utf8 = true;
-  private tail: Uint8Array = new Uint8Array(0);
+  private tail: Uint8Array = NOTHING;
   private atStart = true;
 
   constructor(head: Uint8Array) {
@@ -76,22 +92,23 @@ export class TextDecoding {
   end(): string {
     if (this.wide !== null) return this.wide.decode();
     const rest = this.tail;
-    this.tail = new Uint8Array(0);
-    return rest.length === 0 ? "" : this.narrow.decode(rest);
+    this.tail = NOTHING;
+    if (rest.length === 0) return "";
+    return isUtf8(rest) ? utf8Text(rest) : this.narrow.decode(rest);
   }
 
   private decodeNarrow(bytes: Uint8Array): string {
     if (!this.utf8) return this.narrow.decode(bytes, { stream: true });
     const joined = this.tail.length === 0 ? bytes : Buffer.concat([this.tail, bytes]);
-    const open = openTail(joined);
-    const whole = open === 0 ? joined : joined.subarray(0, joined.length - open);
+    const cut = cutPlace(joined);
+    const whole = joined.subarray(0, cut);
     if (isUtf8(whole)) {
-      this.tail = open === 0 ? new Uint8Array(0) : joined.slice(joined.length - open);
-      return Buffer.from(whole.buffer, whole.byteOffset, whole.length).toString("utf8");
+      this.tail = cut === joined.length ? NOTHING : joined.slice(cut);
+      return utf8Text(whole);
     }
     this.utf8 = false;
     this.repaired = this.declaresUtf8;
-    this.tail = new Uint8Array(0);
+    this.tail = NOTHING;
     return this.narrow.decode(joined, { stream: true });
   }
 }

