@@ -1,3 +1,4 @@
+import type { ReactNode } from "react";
 import { Button } from "@/components/ui/button";
 import { Disclosure } from "@/components/ui/disclosure";
 import { LinkButton } from "@/components/ui/link-button";
@@ -13,8 +14,10 @@ export function FilterForm(props: {
   kept: Readonly<Record<string, string>>;
   choices: FilterChoices;
   narrowedBy: number;
+  /** More fields of the same form, below the filter's own. */
+  children?: ReactNode;
 }) {
-  const { action, values, kept, choices, narrowedBy } = props;
+  const { action, values, kept, choices, narrowedBy, children } = props;
   const summary = narrowedBy === 0 ? "Filter" : `Filter: narrowed by ${narrowedBy}`;
   return (
     <Disclosure summary={summary} open={narrowedBy > 0}>
@@ -23,6 +26,7 @@ export function FilterForm(props: {
           <input key={name} type="hidden" name={name} value={value} />
         ))}
         <FilterFields values={values} choices={choices} />
+        {children}
         <div className="flex flex-wrap gap-3">
           <Button type="submit" look="main">
             Apply

@@ -1,5 +1,6 @@
 import type { Metadata } from "next";
 import { FilterForm } from "@/components/log/filter-form";
+import { SortFields } from "@/components/log/sort-fields";
 import { PageHeader } from "@/components/ui/page-header";
 import { pageRead } from "@/lib/server/adapter/page";
 import { requestContext } from "@/lib/server/adapter/request-context";
@@ -8,7 +9,7 @@ import { filterChoices } from "@/lib/server/log/filter-choices";
 import { listLog } from "@/lib/server/log/list-log";
 import { parseLogFilter } from "@/lib/server/log/log-filter";
 import { LogView } from "./_components/log-view";
-import { filterValues, keptSort, narrowedBy } from "./search-params";
+import { filterValues, narrowedBy } from "./search-params";
 
 export const metadata: Metadata = { title: "Sessions" };
 
@@ -29,10 +30,12 @@ export default async function SessionsPage({ searchParams }: PageProps<"/session
         <FilterForm
           action="/sessions"
           values={filterValues(filter)}
-          kept={keptSort(filter)}
+          kept={{}}
           choices={choices}
           narrowedBy={narrowedBy(filter)}
-        />
+        >
+          <SortFields sort={filter.sort} order={filter.order} />
+        </FilterForm>
       )}
       <LogView log={log} filter={filter} units={user.units} />
     </>

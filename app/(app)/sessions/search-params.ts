@@ -9,11 +9,3 @@ export function filterValues(filter: LogFilter): Record<string, string | number 
 export function narrowedBy(filter: LogFilter): number {
   return LOG_NARROWING.filter((key) => filter[key] !== undefined).length;
 }
-
-/** The sort, kept while the filter changes; defaults stay out of the URL. */
-export function keptSort(filter: LogFilter): Record<string, string> {
-  return {
-    ...(filter.sort === "start" ? {} : { sort: filter.sort }),
-    ...(filter.order === "desc" ? {} : { order: filter.order }),
-  };
-}

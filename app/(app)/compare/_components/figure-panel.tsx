@@ -24,7 +24,7 @@ export function shownFigures(speed: SpeedUnit): readonly ShownFigure[] {
       figure: "onFoilShare",
       title: "On-foil share",
       unit: "% of way",
-      decimals: 0,
+      decimals: 1,
       convert: (share) => share * 100,
     },
   ];

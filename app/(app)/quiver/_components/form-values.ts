@@ -1,4 +1,4 @@
-import { formatNumber } from "@/lib/display/format-number";
+import { withUnit } from "@/lib/display/format-number";
 import { DIMENSION_FIELDS, PART_KINDS } from "@/lib/gear/dimension-fields";
 import { SETUP_PART_COLUMNS } from "@/lib/gear/part-schema";
 import type { getPart, getSetup, listParts } from "@/lib/server/gear/read-gear";
@@ -50,9 +50,8 @@ export function partSummary(part: Part): string {
     .flatMap((field) => {
       const value = part.dimensions[field.key];
       if (typeof value !== "number") return [];
-      const printed = value / field.toSi;
-      const decimals = Math.abs(printed - Math.round(printed)) < 1e-6 ? 0 : 1;
-      return [`${field.label.toLowerCase()} ${formatNumber(printed, decimals)}\u00a0${field.unit}`];
+      const printed = String(Number((value / field.toSi).toFixed(2)));
+      return [`${field.label.toLowerCase()} ${withUnit(printed, field.unit)}`];
     })
     .join(", ");
 }

@@ -9,6 +9,7 @@ import { logQuery, type LogFilter } from "@/lib/server/log/log-filter";
 import type { Log } from "@/lib/server/log/list-log";
 import { distanceFromM, type DistanceUnit } from "@/lib/units/length";
 import type { SpeedUnit } from "@/lib/units/speed";
+import { LogRows } from "./log-rows";
 import { LogTable } from "./log-table";
 
 /** The filtered log: totals of all that the filter leaves, one page of rows, or what to do when there is none. */
@@ -49,16 +50,26 @@ export function LogView(props: {
   return (
     <>
       <Section id="totals" title="Totals" reading="Of all sessions that the filter leaves.">
-        <FigureList
-          figures={[
-            { label: "Sessions", value: String(totals.sessions) },
-            { label: "Time out", value: formatDuration(totals.elapsedS) },
-            { label: "Under way", value: length(totals.waterDistanceM), unit: units.distance },
-            { label: "On foil", value: length(totals.onFoilDistanceM), unit: units.distance },
-            { label: "Time on foil", value: formatDuration(totals.onFoilTimeS) },
-            { label: "Bump rides", value: String(totals.bumpRides) },
-          ]}
-        />
+        <div className="grid gap-x-10 sm:grid-cols-2 lg:grid-cols-3">
+          <FigureList
+            figures={[
+              { label: "Sessions", value: String(totals.sessions) },
+              { label: "Time out", value: formatDuration(totals.elapsedS) },
+            ]}
+          />
+          <FigureList
+            figures={[
+              { label: "Under way", value: length(totals.waterDistanceM), unit: units.distance },
+              { label: "On foil", value: length(totals.onFoilDistanceM), unit: units.distance },
+            ]}
+          />
+          <FigureList
+            figures={[
+              { label: "Time on foil", value: formatDuration(totals.onFoilTimeS) },
+              { label: "Bump rides", value: String(totals.bumpRides) },
+            ]}
+          />
+        </div>
       </Section>
       <Section
         id="log"
@@ -70,7 +81,12 @@ export function LogView(props: {
           </LinkButton>
         }
       >
-        <LogTable rows={log.rows} filter={filter} units={units} />
+        <div className="hidden sm:block">
+          <LogTable rows={log.rows} filter={filter} units={units} />
+        </div>
+        <div className="sm:hidden">
+          <LogRows rows={log.rows} units={units} />
+        </div>
         <Pagination
           page={log.page}
           pages={log.pages}
