@@ -9,7 +9,7 @@ import type { Context } from "@/lib/server/context/context";
 import { sessionTitle } from "@/lib/server/sessions/session-title";
 import { analysedColumns, insertAnalysis } from "@/lib/server/sessions/write-analysis";
 import type { AnalysedFile } from "@/lib/worker/analysis-task";
-import type { FileVerdict } from "./file-verdict";
+import type { FileVerdict } from "@/lib/display/file-verdict";
 
 /** Two recordings that begin and end within this are the same outing: formats round times differently. */
 const SAME_OUTING_MS = 2000;

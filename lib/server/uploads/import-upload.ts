@@ -13,7 +13,7 @@ import { parseInput } from "@/lib/server/input/parse-input";
 import type { TrackOutcome } from "@/lib/worker/analysis-task";
 import { analyseStored } from "./analyse-stored";
 import { createSession } from "./create-session";
-import type { FileVerdict } from "./file-verdict";
+import type { FileVerdict } from "@/lib/display/file-verdict";
 
 const importSchema = z.strictObject({
   uploadId: z.string().min(1).max(40),
