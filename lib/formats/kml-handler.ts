@@ -3,7 +3,7 @@ import type { OptionalColumn } from "@/lib/track/fix-columns";
 import { kmlConverter } from "./togeojson-facade";
 import type { ReadBudget } from "./read-limits";
 import { refusal } from "./refusal";
-import { TrackHandler } from "./track-handler";
+import { GATHERED_MAX, TrackHandler } from "./track-handler";
 import type { TagName } from "./xml-tokenizer";
 
 const OTHER = 0;
@@ -39,8 +39,6 @@ const CODES: Readonly<Record<string, number>> = {
   Folder: FOLDER,
   Document: FOLDER,
 };
-/** A line longer than this cannot be placed in time by one time span and is not kept. */
-const LINE_LENGTH_MAX = 64 * 1024;
 
 function arrayColumn(name: string): OptionalColumn | null {
   const plain = name.toLowerCase().replaceAll(/[^a-z]/g, "");
@@ -164,10 +162,6 @@ export class KmlHandler extends TrackHandler {
     this.wantsText = true;
   }
 
-  override text(text: string): void {
-    if (this.gathered.length < LINE_LENGTH_MAX) super.text(text);
-  }
-
   private closeField(depth: number): void {
     const text = this.gathered.trim();
     if (this.trackDepth > 0) {
@@ -244,7 +238,7 @@ export class KmlHandler extends TrackHandler {
   /** A placemark without a gx:Track: its first point at its (first) time, its last at the end of its span. */
   private takePlacemark(): void {
     const [begin, end] = this.times;
-    const whole = this.path.length < LINE_LENGTH_MAX;
+    const whole = this.path.length < GATHERED_MAX;
     if (begin === undefined || !whole) {
       this.inPointRun = this.inPointRun && this.geometry === POINT;
       this.sink.notes.add(this.geometry === POINT ? "waypoints_ignored" : "lines_ignored");

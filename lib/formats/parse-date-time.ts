@@ -1,5 +1,6 @@
+const LENGTH_MAX = 64;
 const DAY_MS = 86_400_000;
-const LONG_FORM = /^(-?\d{5,}|-\d{4})-(\d\d)-(\d\d)(T.*)$/;
+const LONG_FORM = /^(-?\d{5,9}|-\d{4})-(\d\d)-(\d\d)(T.*)$/;
 const MONTH_DAYS = [31, 28, 31, 30, 31, 30, 31, 31, 30, 31, 30, 31] as const;
 
 /** Two digits at a place, or NaN. */
@@ -82,7 +83,7 @@ export function parseDateTime(raw: string): number {
     if (year === 0) return Number.NaN;
     return epochDays(year, pair(text, 5), pair(text, 8)) * DAY_MS + clockMs(text, 10);
   }
-  const long = LONG_FORM.exec(text);
+  const long = text.length > LENGTH_MAX ? null : LONG_FORM.exec(text);
   if (long === null) return Number.NaN;
   const [, year = "", month = "", day = "", clock = ""] = long;
   return epochDays(Number(year), Number(month), Number(day)) * DAY_MS + clockMs(clock, 0);

@@ -7,6 +7,8 @@ import type { TagHandler, TagName } from "./xml-tokenizer";
 
 /** Names of places and sessions longer than this are cut. */
 const TITLE_LENGTH_MAX = 200;
+/** No value of a fix and no line that a time span can place is longer; the rest of a text is let go. */
+export const GATHERED_MAX = 64 * 1024;
 
 /**
  * What GPX, TCX and KML have in common: one text is gathered at a time, namespaces are looked at only to say
@@ -34,6 +36,10 @@ export abstract class TrackHandler implements TagHandler {
   protected abstract planOnly(): ParseError | null;
 
   text(text: string): void {
+    if (this.gathered.length + text.length > GATHERED_MAX) {
+      this.gathered = (this.gathered + text.slice(0, GATHERED_MAX)).slice(0, GATHERED_MAX);
+      return;
+    }
     this.gathered = this.gathered === "" ? text : this.gathered + text;
   }
 
