@@ -1,7 +1,7 @@
 import path from "node:path";
 
 /** Raised whenever the cut of the land changes: old archives are then built anew under a new name. */
-export const BASEMAP_VERSION = 1;
+export const BASEMAP_VERSION = 2;
 
 /** Where the archive of land tiles stands under the data folder. */
 export function basemapArchivePath(dataDir: string): string {

@@ -1,11 +1,11 @@
 import { z } from "zod";
 import { themeTokens } from "@/lib/display/theme-tokens";
+import { LAND_ATTRIBUTION } from "@/lib/display/land-attribution";
 import { AppError } from "@/lib/errors/app-error";
 import type { BasemapStatus } from "./status";
 
 const themeSchema = z.enum(["light", "dark"]);
 const COASTLINE = { light: "#a08f6c", dark: "#6b7d72" } as const;
-export const LAND_ATTRIBUTION = "Land: OpenStreetMap contributors, ODbL";
 
 /**
  * The background of the map as a MapLibre style (style specification, version 8): water, and land with its
