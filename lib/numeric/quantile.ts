@@ -41,19 +41,3 @@ export function sortedQuantile(sorted: ArrayLike<number>, p: number): number {
 export function median(values: ArrayLike<number>): number {
   return quantile(values, 0.5);
 }
-
-/** Makes the median absolute deviation estimate a normal standard deviation: 1 / (normal quantile of 3/4). */
-export const MAD_TO_SD = 1.4826;
-
-/**
- * The median absolute deviation from the median, unscaled (times `MAD_TO_SD` it estimates a normal standard
- * deviation). Empty or not finite input gives NaN. Source: Hampel, JASA 69 (1974).
- *
- * @example
- * medianAbsoluteDeviation([1, 1, 2, 2, 4, 6, 9]); // 1
- */
-export function medianAbsoluteDeviation(values: ArrayLike<number>): number {
-  const centre = median(values);
-  const deviations = Float64Array.from(values, (value) => Math.abs(value - centre));
-  return median(deviations);
-}
