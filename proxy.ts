@@ -18,6 +18,8 @@ export function proxy(request: NextRequest): NextResponse {
   };
   const inward = new Headers(request.headers);
   inward.set("x-nonce", settings.nonce);
+  // Where the person wanted to go, for the way back after signing in.
+  inward.set("x-path", request.nextUrl.pathname + request.nextUrl.search);
   inward.set("content-security-policy", contentSecurityPolicy(settings));
   const response = NextResponse.next({ request: { headers: inward } });
   for (const [name, value] of Object.entries(securityHeaders(settings))) response.headers.set(name, value);

@@ -22,11 +22,15 @@ export function contentSecurityPolicy(settings: HeaderSettings): string {
   const elsewhere = settings.mapStyleUrl === null ? [] : ["https:"];
   // The development server swaps modules by eval and reports over a web socket.
   const developmentScript = isDevelopment ? ["'unsafe-eval'"] : [];
+  // It also draws its own panel of errors with styles of its own.
+  const styles = isDevelopment
+    ? ["'unsafe-inline'"]
+    : [`'nonce-${nonce}'`, ...SONNER_STYLE_HASHES.map((hash) => `'${hash}'`)];
   const developmentConnect = isDevelopment ? ["ws:"] : [];
   const directives: Readonly<Record<string, readonly string[]>> = {
     "default-src": ["'self'"],
     "script-src": ["'self'", `'nonce-${nonce}'`, "'strict-dynamic'", ...developmentScript],
-    "style-src": ["'self'", `'nonce-${nonce}'`, ...SONNER_STYLE_HASHES.map((hash) => `'${hash}'`)],
+    "style-src": ["'self'", ...styles],
     "style-src-attr": ["'unsafe-inline'"],
     "img-src": ["'self'", "data:", "blob:", ...elsewhere],
     "font-src": ["'self'"],
