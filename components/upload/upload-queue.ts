@@ -25,7 +25,7 @@ export type QueueLimits = {
   readonly filesMax: number;
 };
 
-type Entry = { item: UploadItem; file: File | null; stop: (() => void) | null };
+type Entry = { item: UploadItem; readonly turn: number; file: File | null; stop: (() => void) | null };
 
 /**
  * The files of one visit on their way: sent two at a time, read one after the other. It lives outside of React, so that walking to
@@ -64,7 +64,7 @@ export class UploadQueue {
   add(files: readonly File[]): number {
     const open = this.entries.filter(({ item }) => isBusy([item])).length;
     const taken = files.slice(0, Math.max(0, this.limits.filesMax - open));
-    for (const file of taken) this.entries.unshift(this.newEntry(file));
+    this.entries = [...taken.map((file) => this.newEntry(file)), ...this.entries];
     this.changed();
     this.next();
     return files.length - taken.length;
@@ -75,15 +75,16 @@ export class UploadQueue {
     const known = new Set(this.entries.map(({ item }) => item.uploadId));
     for (const { uploadId, fileName, sizeBytes } of uploads) {
       if (known.has(uploadId)) continue;
+      const turn = this.newTurn();
       const item: UploadItem = {
-        key: this.newKey(),
+        key: `file-${turn}`,
         name: fileName,
         sizeBytes,
         uploadId,
         setupId: null,
         state: { step: "stored" },
       };
-      this.entries.push({ item, file: null, stop: null });
+      this.entries.push({ item, turn, file: null, stop: null });
     }
     this.changed();
     this.next();
@@ -114,15 +115,16 @@ export class UploadQueue {
     this.next();
   }
 
-  private newKey(): string {
+  private newTurn(): number {
     this.made += 1;
-    return `file-${this.made}`;
+    return this.made;
   }
 
   private newEntry(file: File): Entry {
     const { name, size } = file;
-    const item = { key: this.newKey(), name, sizeBytes: size, uploadId: null, setupId: null };
-    return { item: { ...item, state: this.firstState(size) }, file, stop: null };
+    const turn = this.newTurn();
+    const item = { key: `file-${turn}`, name, sizeBytes: size, uploadId: null, setupId: null };
+    return { item: { ...item, state: this.firstState(size) }, turn, file, stop: null };
   }
 
   private firstState(sizeBytes: number): UploadState {
@@ -139,10 +141,6 @@ export class UploadQueue {
     return this.entries.find(({ item }) => item.key === key);
   }
 
-  private count(step: UploadState["step"]): number {
-    return this.entries.filter(({ item }) => item.state.step === step).length;
-  }
-
   private set(entry: Entry, state: UploadState, uploadId = entry.item.uploadId): void {
     entry.item = { ...entry.item, state, uploadId };
     this.changed();
@@ -153,14 +151,16 @@ export class UploadQueue {
     for (const listener of this.listeners) listener();
   }
 
-  /** Starts what may start now: the oldest of those that wait. */
+  private inTurn(step: UploadState["step"]): Entry[] {
+    return this.entries.filter(({ item }) => item.state.step === step).sort((a, b) => a.turn - b.turn);
+  }
+
+  /** Starts what may start now, first come first served. */
   private next(): void {
-    const waiting = this.entries.filter(({ item }) => item.state.step === "waiting").reverse();
-    for (const entry of waiting.slice(0, this.limits.sendingAtOnce - this.count("sending"))) {
-      void this.send(entry);
-    }
-    const stored = this.entries.findLast(({ item }) => item.state.step === "stored");
-    if (stored !== undefined && this.count("reading") === 0) void this.read(stored);
+    const room = this.limits.sendingAtOnce - this.inTurn("sending").length;
+    for (const entry of this.inTurn("waiting").slice(0, Math.max(0, room))) void this.send(entry);
+    const stored = this.inTurn("stored")[0];
+    if (stored !== undefined && this.inTurn("reading").length === 0) void this.read(stored);
   }
 
   private async send(entry: Entry): Promise<void> {

@@ -56,13 +56,6 @@ export function UploadRow({
 
 function RowButtons({ item, actions }: { item: UploadItem; actions: RowActions }) {
   const { key, name, state } = item;
-  if (state.step === "waiting" || state.step === "sending") {
-    return (
-      <Button look="quiet" size="small" className="mt-2" onClick={() => actions.stop(key)}>
-        Stop <span className="sr-only">sending {name}</span>
-      </Button>
-    );
-  }
   if (state.step === "failed" && state.signedOut) {
     return (
       <LinkButton look="quiet" size="small" className="mt-2" href="/sign-in?next=/upload">

@@ -6,7 +6,7 @@ const APART_M_MIN = 3000;
 const STRAIGHT_SHARE_MIN = 0.6;
 
 /**
- * What was probably ridden, for a rider whose log cannot tell yet: downwind when the way over the water leads from one place to
+ * What was probably ridden, as a first word that the rider can change: downwind when the way over the water leads from one place to
  * another, wing when it comes back. Common practice, no source. An empty track is "other".
  */
 export function guessDiscipline({ smoothed, window }: PreparedTrack): Discipline {

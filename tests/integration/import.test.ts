@@ -164,7 +164,7 @@ describe("importing an upload", () => {
     expect(await sessionsOf(riderId)).toHaveLength(2);
   });
 
-  test("takes the discipline of the rider's last session for the next", async () => {
+  test('keeps to "other" for a rider who said so last time', async () => {
     await importUpload(rider(), { uploadId: await sendRide(), setupId: null });
     await db.write((tx) =>
       tx.update(session).set({ discipline: "other" }).where(eq(session.ownerId, riderId)),

@@ -54,7 +54,8 @@ async function importStored(ctx: Context, row: UploadRow, setupId: string | null
   const { ownerId } = row;
   const known = await knownVerdicts(ctx.db.read, row);
   if (row.status === "done" && known.length === row.verdicts.length) return known;
-  const discipline = (await lastDisciplineOf(ctx.db.read, ownerId)) ?? null;
+  // Downwind or wing is seen from the track; neither is what a rider of something else said last time.
+  const discipline = (await lastDisciplineOf(ctx.db.read, ownerId)) === "other" ? "other" : null;
   const outcomes = await analyseStored(row, {
     discipline,
     trim: null,
