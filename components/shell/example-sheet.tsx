@@ -43,7 +43,7 @@ export function ExampleSheet() {
           <Drawings />
         </div>
         <div className="border-hairline border-t px-4 pb-4 lg:border-t-0 lg:border-l lg:pt-2">
-          <FigureList figures={FIGURES} className="border-t-0" />
+          <FigureList figures={FIGURES} ruled={false} />
         </div>
       </div>
     </figure>

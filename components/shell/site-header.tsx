@@ -23,12 +23,12 @@ export type SiteHeaderProps = {
 export function SiteHeader({ person, signOut }: SiteHeaderProps) {
   return (
     <header className="border-ink no-print border-b">
-      <div className="page flex min-h-16 items-center gap-x-4 gap-y-2 py-2 whitespace-nowrap md:gap-x-8">
+      <div className="page flex min-h-16 items-center gap-x-4 gap-y-2 py-2 whitespace-nowrap lg:gap-x-8">
         <Link
           href={person ? "/sessions" : "/"}
           className="flex min-h-11 items-center gap-2 text-lg font-bold [font-stretch:125%]"
         >
-          <WakeMark />
+          <WakeMark className="max-[22rem]:hidden" />
           Trimwake
         </Link>
         {person ? <SignedIn person={person} signOut={signOut} /> : <Visitor />}
@@ -41,7 +41,7 @@ function SignedIn({ person, signOut }: { person: { readonly name: string }; sign
   return (
     <>
       <nav aria-label="Main" className="hidden flex-1 md:block">
-        <ul className="flex gap-6">
+        <ul className="flex gap-4 lg:gap-6">
           {PLACES.map((place) => (
             <li key={place.href}>
               <NavLink href={place.href} className="mark-current inline-flex min-h-9 items-center">
@@ -51,15 +51,17 @@ function SignedIn({ person, signOut }: { person: { readonly name: string }; sign
           ))}
         </ul>
       </nav>
-      <div className="ml-auto flex items-center gap-6">
-        <LinkButton href={UPLOAD_PATH} look="main" className="hidden md:inline-flex">
-          Upload tracks
-        </LinkButton>
+      <div className="ml-auto flex items-center gap-4 lg:gap-6">
+        <div className="hidden md:block">
+          <LinkButton href={UPLOAD_PATH} look="main">
+            Upload tracks
+          </LinkButton>
+        </div>
         <Menu
           className="hidden md:block"
           label={
             <>
-              <span className="max-w-48 truncate">{person.name}</span>
+              <span className="max-w-24 truncate lg:max-w-48">{person.name}</span>
               <span className="sr-only">, your menu</span>
             </>
           }

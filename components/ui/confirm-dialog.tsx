@@ -39,7 +39,7 @@ export function ConfirmDialog(props: ConfirmDialogProps) {
           <SubmitButton look={look} busyText={busyText}>
             {confirm}
           </SubmitButton>
-          <DialogClose>Keep it as it is</DialogClose>
+          <DialogClose data-first-focus>Keep it as it is</DialogClose>
         </div>
       </form>
     </Dialog>

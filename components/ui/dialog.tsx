@@ -15,7 +15,8 @@ export type DialogProps = {
 
 /**
  * The browser's own modal dialog: Escape closes, focus stays inside and comes back. The command attributes
- * open it before (or without) JavaScript where the browser knows them.
+ * open it before (or without) JavaScript where the browser knows them. The focus goes to the first control, or
+ * to the one marked with data-first-focus: in a dialog that ends something, the way back.
  */
 export function Dialog({ title, trigger, triggerProps, children, className }: DialogProps) {
   const dialog = useRef<HTMLDialogElement>(null);
@@ -38,6 +39,7 @@ export function Dialog({ title, trigger, triggerProps, children, className }: Di
         {...{ command: "show-modal", commandfor: id }}
         onClick={() => {
           if (!dialog.current?.open) dialog.current?.showModal();
+          dialog.current?.querySelector<HTMLElement>("[data-first-focus]")?.focus();
         }}
       >
         {trigger}

@@ -19,9 +19,24 @@ export type Figure = {
 };
 
 /** Figures set like a tide table: words left, numbers in one column on the right, units small behind them. */
-export function FigureList({ figures, className }: { figures: readonly Figure[]; className?: string }) {
+export function FigureList({
+  figures,
+  ruled = true,
+  className,
+}: {
+  figures: readonly Figure[];
+  /** False inside a frame that has its own line above. */
+  ruled?: boolean;
+  className?: string;
+}) {
   return (
-    <dl className={classNames("rule-ink", className)}>
+    <dl
+      className={classNames(
+        "grid grid-cols-[minmax(0,1fr)_auto_minmax(3.25rem,auto)] gap-x-1.5",
+        ruled && "rule-ink",
+        className,
+      )}
+    >
       {figures.map((figure) => (
         <FigureRow key={figure.label} figure={figure} />
       ))}
@@ -41,7 +56,7 @@ function FigureRow({ figure }: { figure: Figure }) {
   return (
     <div
       className={classNames(
-        "rule-hair grid grid-cols-[minmax(0,1fr)_auto_minmax(3.25rem,auto)] items-baseline gap-x-1.5",
+        "rule-hair col-span-3 grid grid-cols-subgrid items-baseline",
         big ? "py-1.5" : "py-2",
       )}
     >

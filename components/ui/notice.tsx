@@ -10,17 +10,20 @@ export type NoticeProps = {
 };
 
 const EDGES = {
-  info: "border-ink",
-  done: "border-swell",
-  problem: "border-buoy-text",
-  caution: "border-buoy",
+  info: "border-l-ink",
+  done: "border-l-swell",
+  problem: "border-l-buoy-text",
+  caution: "border-l-buoy",
 } as const;
 
 const ROLES = { info: "status", done: "status", problem: "alert", caution: "note" } as const;
 
 export function Notice({ kind = "info", title, children, className }: NoticeProps) {
   return (
-    <div role={ROLES[kind]} className={classNames("bg-sheet border border-l-4 p-4", EDGES[kind], className)}>
+    <div
+      role={ROLES[kind]}
+      className={classNames("bg-sheet border-ink border border-l-4 p-4", EDGES[kind], className)}
+    >
       {title && <p className="font-semibold">{title}</p>}
       {children && <div className={classNames(title ? "mt-1" : null)}>{children}</div>}
     </div>

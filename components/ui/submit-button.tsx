@@ -12,19 +12,23 @@ export type SubmitButtonProps = Omit<ButtonProps, "type"> & {
 export function SubmitButton({ busyText, look = "main", children, onClick, ...rest }: SubmitButtonProps) {
   const { pending } = useFormStatus();
   return (
-    <Button
-      type="submit"
-      look={look}
-      aria-disabled={pending}
-      onClick={(event) => {
-        if (pending) event.preventDefault();
-        else onClick?.(event);
-      }}
-      {...rest}
-    >
-      <span role="status" className="contents">
-        {pending ? (busyText ?? children) : children}
+    <>
+      <Button
+        {...rest}
+        type="submit"
+        look={look}
+        aria-disabled={pending || undefined}
+        onClick={(event) => {
+          if (pending) event.preventDefault();
+          else onClick?.(event);
+        }}
+      >
+        {pending && busyText ? busyText : children}
+      </Button>
+      {/* Beside the button, not in it: what stands in a button is its name. */}
+      <span role="status" className="sr-only">
+        {pending ? (busyText ?? "Working") : ""}
       </span>
-    </Button>
+    </>
   );
 }

@@ -81,7 +81,7 @@ export function Th(props: ThProps) {
         <Link
           href={sortHref}
           scroll={false}
-          className="inline-flex min-h-6 items-baseline gap-1 underline decoration-hairline underline-offset-4 hover:decoration-ink"
+          className="-my-0.5 inline-flex items-baseline gap-1 py-0.5 underline decoration-hairline underline-offset-4 hover:decoration-ink"
         >
           <span>{words}</span>
           <span

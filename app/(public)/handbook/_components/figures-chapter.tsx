@@ -1,7 +1,16 @@
-import { figureDefinitions } from "@/lib/analysis/definitions";
+import { FIGURE_DEFINITIONS, type FigureDefinition, type FigureUnit } from "@/lib/analysis/definitions";
 import type { Chapter } from "./chapter";
 
-type FigureDefinition = (typeof figureDefinitions)[number];
+const UNIT_WORDS: Readonly<Record<FigureUnit, string>> = {
+  speed: "kn, km/h, mph or m/s, as you choose",
+  distance: "NM, km or mi, as you choose; m when it is short",
+  duration: "h:mm:ss",
+  share: "per cent",
+  count: "a count",
+  ratio: "none: metres by metres",
+  per_km: "per kilometre",
+  per_hour: "per hour",
+};
 
 /** What a figure is, how it is worked out, where that comes from, and where it stops being true. */
 function FigureText({ figure }: { figure: FigureDefinition }) {
@@ -16,7 +25,7 @@ function FigureText({ figure }: { figure: FigureDefinition }) {
               {figure.formula}
             </span>,
           ],
-          ["Unit", figure.unit === "" ? "none, a plain number" : figure.unit],
+          ["Unit", UNIT_WORDS[figure.unit]],
           ["Limits", figure.limits],
           ["Source", figure.source],
         ].map(([term, words]) => (
@@ -34,7 +43,7 @@ export const figuresChapter: Chapter = {
   slug: "figures",
   title: "The figures",
   summary: "Every figure of a session: what it is, its formula, its source and its limits.",
-  sections: figureDefinitions.map((figure) => ({
+  sections: FIGURE_DEFINITIONS.map((figure) => ({
     id: figure.key,
     title: figure.name,
     body: <FigureText figure={figure} />,
