@@ -14,18 +14,18 @@ export function ResendForm({ act, email, children }: { act: Act; email: string; 
         Confirm <span className="font-semibold">{email}</span> by the link in your mail: without it a
         forgotten password cannot be set anew.
       </p>
-      <p
-        role="status"
-        className={state.status === "error" ? "text-buoy-text font-semibold" : "font-semibold"}
-      >
-        {state.message}
-      </p>
       {state.status !== "ok" && (
         <SubmitButton look="quiet" busyText="Sending">
           Send the link again
         </SubmitButton>
       )}
       {children}
+      <p
+        role="status"
+        className={state.status === "error" ? "text-buoy-text font-semibold" : "font-semibold"}
+      >
+        {state.message}
+      </p>
     </form>
   );
 }

@@ -9,7 +9,7 @@ import { requestContext } from "@/lib/server/adapter/request-context";
 import { ConfirmForm } from "./_components/confirm-form";
 import { confirmEmailAction } from "./actions";
 
-const TITLE = "Confirm your e-mail address";
+const TITLE = "Confirm your address";
 
 export const metadata: Metadata = { title: TITLE, robots: { index: false } };
 

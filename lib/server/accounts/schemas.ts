@@ -1,5 +1,6 @@
 import { z } from "zod";
 import { parseDecimal } from "@/lib/display/parse-decimal";
+import { passwordProblem } from "@/lib/server/auth/password-rules";
 
 /** Long enough for 128 characters of any kind; longer input is not worth hashing. */
 const PASSWORD_INPUT_MAX = 2000;
@@ -31,10 +32,16 @@ export const passwordField = z
   .min(1, { error: "Enter your password." })
   .max(PASSWORD_INPUT_MAX, { error: "This is longer than any password here." });
 
-/** A password to be set: judged by passwordProblem once name and address are known. */
+const NOBODY = { email: "", name: "" };
+
+/** A password to be set; whether it is one's own name or address is judged once those are known. */
 export const newPasswordField = z
   .string({ error: "Enter a password." })
-  .max(PASSWORD_INPUT_MAX, { error: "Use at most 128 characters." });
+  .max(PASSWORD_INPUT_MAX, { error: "Use at most 128 characters.", abort: true })
+  .superRefine((password, issue) => {
+    const problem = passwordProblem(password, NOBODY);
+    if (problem !== null) issue.addIssue({ code: "custom", message: problem });
+  });
 
 const NAME_TEXT = "Enter your name, as others should read it.";
 

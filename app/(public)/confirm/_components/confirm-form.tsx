@@ -11,7 +11,7 @@ export function ConfirmForm({ act, token }: { act: Act; token: string }) {
   const [state, action] = useActionState(act, IDLE_FORM);
   return (
     <form action={action} noValidate className="flex max-w-xl flex-col gap-6">
-      <FormProblems state={state} title="Confirm your e-mail address" />
+      <FormProblems state={state} title="Confirm your address" />
       <input type="hidden" name="token" value={token} />
       <SubmitButton busyText="Confirming" className="self-start">
         Confirm this address

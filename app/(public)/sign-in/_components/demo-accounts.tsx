@@ -31,8 +31,9 @@ export function DemoAccounts({
                 <span className="font-semibold">{account.name}</span>
                 <span className="text-muted">, {account.role.toLowerCase()}</span>
               </p>
-              <p className="num text-muted text-sm break-words">
-                {account.email} {account.password}
+              <p className="num text-muted flex flex-wrap gap-x-4 text-sm break-all">
+                <span>{account.email}</span>
+                <span>{account.password}</span>
               </p>
             </div>
             <form action={action}>

@@ -10,7 +10,7 @@ const deviceZone = () => Intl.DateTimeFormat().resolvedOptions().timeZone;
 export function LocalTime({ timeMs }: { timeMs: number }) {
   const zone = useSyncExternalStore(never, deviceZone, () => null);
   return (
-    <time dateTime={isoWithOffset(timeMs, "UTC")} className="num whitespace-nowrap">
+    <time dateTime={isoWithOffset(timeMs, "UTC")} className="whitespace-nowrap">
       {zone === null ? `${formatDateTime(timeMs, "UTC")} UTC` : formatDateTime(timeMs, zone)}
     </time>
   );
