@@ -1,10 +1,11 @@
 import { mkdir } from "node:fs/promises";
-import { prepareDatabase } from "@/db/client";
+import { prepareDatabase, type Database } from "@/db/client";
 import { migrateDatabase } from "@/db/migrate";
 import { database } from "@/lib/server/context/database";
 import { logEvent } from "@/lib/server/context/log";
 import { env } from "@/lib/server/env/env";
 import { smtpSend, startSender } from "@/lib/server/mail/sender";
+import { sweepOrphans } from "@/lib/server/uploads/sweep-files";
 import { backUpBeforeMigration } from "./backup";
 import { checkDatabase, freeDiskMb, probeWrite } from "./checks";
 import { startSweeping, sweep } from "./sweep";
@@ -29,11 +30,20 @@ export async function startUp(): Promise<void> {
   await migrateDatabase(db, process.cwd());
   const version = databaseUrl.startsWith("file:") ? (await checkDatabase(db)).version : null;
   await sweep(db, Date.now());
+  sweepFilesAside(db);
   startTasks();
   closeAtTheEnd();
   const freeMb = await freeDiskMb(dataDir);
   if (freeMb < settings.minFreeDiskMb) logEvent("warn", "disk_nearly_full", { freeMb });
   logEvent("info", "started", { demo: settings.demo, mode: settings.mode, sqlite: version, freeMb });
+}
+
+/** Looking at every stored file takes seconds on a large store; requests need not wait for it. */
+function sweepFilesAside(db: Database): void {
+  sweepOrphans(db, Date.now()).then(
+    (swept) => logEvent("info", "files_swept", swept),
+    (error: unknown) => logEvent("error", "files_sweep_failed", { error: String(error) }),
+  );
 }
 
 /** Starts what runs beside the requests; a development server that starts again stops its old ones first. */
