@@ -108,6 +108,23 @@ describe("cleaning", () => {
     expect(fixes.heartRateBpm?.[10]).toBe(111);
   });
 
+  it("keeps one of two recordings of the same time and both of two times", () => {
+    const one = steady();
+    const other = makeTrack(() => ({ speedMps: 3, courseDeg: 200 }), { seconds: 200 }).fixes;
+    const joined = (shiftMs: number): Fixes => ({
+      ...fixesOf(
+        [...one.timeMs, ...other.timeMs.map((t) => t + shiftMs)],
+        [...one.latDeg, ...other.latDeg],
+        [...one.lonDeg, ...other.lonDeg],
+      ),
+      segmentStarts: Uint32Array.of(0, one.count),
+    });
+    const together = cleanFixes(joined(0));
+    expect(countOf(together, "second_recording")).toBe(other.count);
+    expect(together.fixes.count).toBe(one.count);
+    expect(countOf(cleanFixes(joined(600_000)), "second_recording")).toBe(0);
+  });
+
   it("keeps the segments of what is left", () => {
     const raw = { ...steady(), segmentStarts: Uint32Array.of(0, 10, 200) };
     expect(Array.from(cleanFixes(moved(raw, 10, 11, 0.001)).fixes.segmentStarts)).toEqual([0, 10, 199]);

@@ -6,6 +6,7 @@ import { dropFrozen } from "./drop-frozen";
 import { dropSpikes } from "./drop-spikes";
 import { draftToFixes, type FixDraft } from "./fix-draft";
 import type { Fixes, TrackNote } from "./fixes";
+import { oneRecording } from "./one-recording";
 import { orderFixes } from "./order-fixes";
 
 /** The believed fixes, times strictly rising, with what was dropped or repaired on the way. */
@@ -19,7 +20,7 @@ export type CleanedFixes = {
 
 /**
  * Cleans a recorded track (steps 1 to 3 of the cleaning; gaps are found later from what is left). In this order: impossible values,
- * time order and equal times, stray clocks, frozen runs, spikes and wrong blocks, an unsettled start. Never throws
+ * a second recording of the same time, time order and equal times, stray clocks, frozen runs, spikes and wrong blocks, an unsettled start. Never throws
  * on data; an empty or hopeless track gives no fixes and notes that say why.
  *
  * @example
@@ -27,7 +28,8 @@ export type CleanedFixes = {
  */
 export function cleanFixes(raw: Fixes): CleanedFixes {
   const believable = believableFixes(raw);
-  const ordered = orderFixes(believable);
+  const single = oneRecording(believable, raw.segmentStarts);
+  const ordered = orderFixes(single);
   const outing = oneOuting(ordered.draft);
   const unfrozen = dropFrozen(outing);
   const despiked = dropSpikes(unfrozen, medianStep(unfrozen));
@@ -37,6 +39,11 @@ export function cleanFixes(raw: Fixes): CleanedFixes {
       "impossible",
       raw.count - believable.count,
       (n) => `${fixesText(n)} with an impossible place or time dropped.`,
+    ),
+    note(
+      "second_recording",
+      believable.count - single.count,
+      (n) => `${fixesText(n)} of a second recording of the same time left out.`,
     ),
     note("reordered", ordered.reordered, (n) => `${fixesText(n)} out of time order put in order.`),
     note("merged", ordered.merged, (n) => `${fixesText(n)} with the same time as another merged with it.`),

@@ -9,6 +9,8 @@ export type CoarseMotion = {
   readonly stepS: number;
   /** Samples of the fine track in one of these. */
   readonly stride: number;
+  readonly xM: Float64Array;
+  readonly yM: Float64Array;
   readonly speedMps: Float64Array;
   readonly speedSeMps: Float64Array;
   readonly gapS: Float64Array;
@@ -43,6 +45,8 @@ export function coarseMotion(track: SmoothedTrack): CoarseMotion {
     count,
     stepS,
     stride,
+    xM,
+    yM,
     speedMps,
     speedSeMps: thin(track.speedSeMps),
     gapS: thin(track.gapS),

@@ -6,10 +6,12 @@ import { restSpeedMps } from "./stationary-gate";
 /** Slower than this over four seconds belongs to the rest before or after it. */
 const SETTLING_MPS = 0.45;
 const JOIN_S = 15;
+/** Up to here rests are one when they are at one place: a receiver may wander off and back. */
+const JOIN_S_SAME_PLACE = 30;
 
 /**
  * Stretches at rest outside `land`: net speed over half a minute no more than a resting receiver shows, grown to where the
- * movement begins and ends, neighbours within 15 s joined. Runs of coarse samples, in order.
+ * movement begins and ends, neighbours within 15 s (half a minute at the same place) joined. Runs of coarse samples, in order.
  */
 export function findRest(motion: CoarseMotion, noiseScaleM: number, land: Uint8Array): Run[] {
   const limit = restSpeedMps(noiseScaleM);
@@ -20,8 +22,16 @@ export function findRest(motion: CoarseMotion, noiseScaleM: number, land: Uint8A
     while (from > 0 && (net4Mps[from] as number) < SETTLING_MPS) from--;
     while (to < count - 1 && (net4Mps[to] as number) < SETTLING_MPS) to++;
     const last = found.at(-1);
-    if (last && (from - last.to) * stepS < JOIN_S) last.to = Math.max(last.to, to);
+    const apartS = last ? (from - last.to) * stepS : Infinity;
+    const samePlace = last ? movedM(motion, last.to, from) < 4 + 2 * noiseScaleM : false;
+    if (last && apartS < (samePlace ? JOIN_S_SAME_PLACE : JOIN_S)) last.to = Math.max(last.to, to);
     else found.push({ from, to });
   }
   return found;
+}
+
+function movedM(motion: CoarseMotion, from: number, to: number): number {
+  const dx = (motion.xM[to] as number) - (motion.xM[from] as number);
+  const dy = (motion.yM[to] as number) - (motion.yM[from] as number);
+  return Math.sqrt(dx * dx + dy * dy);
 }

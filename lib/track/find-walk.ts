@@ -1,5 +1,6 @@
 import { median } from "@/lib/numeric/quantile";
 
+import { changeOfGait } from "./change-of-gait";
 import type { CoarseMotion } from "./coarse-motion";
 
 /** Longest walk between the resting place and the water that is looked for, seconds. */
@@ -8,7 +9,10 @@ const WALK_S_MAX = 340;
 const WALK_S_USUAL = 36;
 const SURELY_RIDING_MPS = 2.7;
 /** Weight of a second's likelihood: neighbouring samples say nearly the same. */
-const EVIDENCE_PER_S = 0.6;
+const EVIDENCE_PER_S = 0.15;
+/** On the way out there is no dip to see: the change of gait says where, and evidence beyond this adds no more length. */
+const EVIDENCE_MAX_OUT = 6;
+const CHANGE_WEIGHT = 0.25;
 /** Weight of the dip in speed when the board is put down. */
 const DIP_WEIGHT = 2.2;
 /** Beginning afloat is the rule at the end of a session less often than at its start. */
@@ -29,16 +33,23 @@ export type WalkSearch = {
 
 /**
  * Length in seconds of the walk between a resting place on land and the water: the cumulated likelihood of steady walking (0.85 to 1.45
- * m/s) against paddling, floating and swimming, with what is usual for such walks, and on the way in the dip when the board is put
- * down. 0 when walking explains nothing. Paddling out and walking overlap in speed: tens of seconds are inherent.
+ * m/s) against paddling, floating and swimming, with what is usual for such walks, and, on the way in, the dip when the board is put
+ * down, on the way out, the change of gait. 0 when walking explains nothing. Paddling out and walking overlap in speed: tens of seconds are inherent.
  * The speeds are from trials on modelled tracks, not from a publication.
  */
 export function walkLengthS(motion: CoarseMotion, search: WalkSearch): number {
   const seTypical = median(motion.speedSeMps.filter((_, i) => i % 40 === 0));
   const seconds = Math.min(WALK_S_MAX, Math.floor(Math.abs(search.limit - search.start) * motion.stepS));
+  const change = changeOfGait(motion, {
+    start: search.start,
+    direction: search.entry ? 1 : -1,
+    seconds,
+    limitMps: SURELY_RIDING_MPS,
+    seMps: seTypical,
+  });
   let best = { score: search.entry ? 0 : WALK_OUT_PRIOR, lengthS: 0 };
   for (let pace = 0.85; pace < 1.46; pace += 0.06) {
-    const found = bestAtPace(motion, search, { pace, seTypical, seconds });
+    const found = bestAtPace(motion, search, { pace, seTypical, seconds, change });
     if (found.score > best.score) best = found;
   }
   return best.lengthS;
@@ -47,7 +58,12 @@ export function walkLengthS(motion: CoarseMotion, search: WalkSearch): number {
 function bestAtPace(
   motion: CoarseMotion,
   search: WalkSearch,
-  trial: { readonly pace: number; readonly seTypical: number; readonly seconds: number },
+  trial: {
+    readonly pace: number;
+    readonly seTypical: number;
+    readonly seconds: number;
+    readonly change: (second: number) => number;
+  },
 ): { score: number; lengthS: number } {
   const blur = 0.6 * trial.seTypical;
   const walkSd = Math.hypot(0.07, blur);
@@ -66,8 +82,10 @@ function bestAtPace(
     }
     if (s < 8) continue;
     const usual = -0.5 * (Math.log(s / WALK_S_USUAL) / logSpread) ** 2;
-    const dip = search.entry ? (DIP_WEIGHT * dipAt(motion, k)) / (0.3 + trial.seTypical) : 0;
-    const score = EVIDENCE_PER_S * 0.25 * evidence + usual + dip;
+    const walked = EVIDENCE_PER_S * evidence;
+    const score = search.entry
+      ? walked + usual + (DIP_WEIGHT * dipAt(motion, k)) / (0.3 + trial.seTypical)
+      : Math.min(EVIDENCE_MAX_OUT, walked) + usual + CHANGE_WEIGHT * trial.change(s);
     if (score > best.score) best = { score, lengthS: s };
   }
   return best;
