@@ -114,7 +114,10 @@ async function readMember(member: ZipMember, budget: ReadBudget): Promise<ReadOu
       throw refusal("broken_archive", { format: "zip", found: "The file is locked with a password" });
     }
     const peeked = await peekBytes(steadyPieces(member.open()));
-    if (sniff(peeked.head, false).kind === "zip") throw refusal("nested_archive", { format: "zip" });
+    if (sniff(peeked.head, false).kind === "zip") {
+      await closePieces(peeked);
+      throw refusal("nested_archive", { format: "zip" });
+    }
     return await readOne(peeked, member.name, budget);
   } catch (error) {
     return refusedOrThrow(member.name, error);

@@ -1,4 +1,4 @@
-import { Buffer, isUtf8 } from "node:buffer";
+import { Buffer, isAscii, isUtf8 } from "node:buffer";
 
 const DECLARATION = /^<\?xml[^>]{0,200}?encoding\s*=\s*["']([A-Za-z0-9._-]{1,40})["']/;
 
@@ -40,7 +40,9 @@ function cutPlace(bytes: Uint8Array): number {
 }
 
 function utf8Text(bytes: Uint8Array): string {
-  return Buffer.from(bytes.buffer, bytes.byteOffset, bytes.length).toString("utf8");
+  const buffer = Buffer.from(bytes.buffer, bytes.byteOffset, bytes.length);
+  // Most tracks are plain ASCII, which is a copy instead of a conversion.
+  return buffer.toString(isAscii(buffer) ? "latin1" : "utf8");
 }
 
 /** How many bytes at the end belong to a UTF-8 character that is not whole yet: 0 to 3. */
