@@ -33,23 +33,29 @@ export function nearestSample(shape: TrackShape): NearestSample {
       const x = (lon - middleLon) * eastPerDegree;
       const y = (latDeg - middleLat) * METRES_PER_DEGREE;
       if (!Number.isFinite(x) || !Number.isFinite(y)) return null;
-      const distance = (sample: number) => Math.hypot((eastM[sample] ?? 0) - x, (northM[sample] ?? 0) - y);
-      let least = Infinity;
+      // Squares order like distances and cost a tenth.
+      const squared = (sample: number) => {
+        const dx = (eastM[sample] ?? 0) - x;
+        const dy = (northM[sample] ?? 0) - y;
+        return dx * dx + dy * dy;
+      };
+      let leastSquared = Infinity;
       let nearest = -1;
       grid.forEachWithin(x, y, radiusM, (sample) => {
-        const away = distance(sample);
-        if (away < least) {
-          least = away;
+        const away = squared(sample);
+        if (away < leastSquared) {
+          leastSquared = away;
           nearest = sample;
         }
       });
+      const least = Math.sqrt(leastSquared);
       if (least > radiusM) return null;
       if (aroundIndex === null) return nearest;
       let found = nearest;
       let foundCost = Infinity;
       // A second look, at the samples about as near only: those of other passes.
       grid.forEachWithin(x, y, least + SAME_PLACE_M, (sample) => {
-        const away = distance(sample);
+        const away = Math.sqrt(squared(sample));
         const apartS = (Math.abs(sample - aroundIndex) * shape.series.stepMs) / 1000;
         const cost = away + Math.min(SAME_PLACE_M, COST_M_PER_S * apartS);
         if (away <= least + SAME_PLACE_M && cost < foundCost) {

@@ -72,10 +72,8 @@ export function TrackCanvas(props: TrackCanvasProps) {
     map?.keyboard.disableRotation();
     map?.touchZoomRotate.disableRotation();
   }, [map]);
-  const showWhole = useCallback(() => {
-    const [west, south, east, north] = bounds;
-    map?.fitBounds([west, south, east, north], { ...FIT, duration: 400 });
-  }, [map, bounds]);
+  const box = useMemo((): [number, number, number, number] => [...bounds], [bounds]);
+  const showWhole = useCallback(() => map?.fitBounds(box, { ...FIT, duration: 400 }), [map, box]);
   const plain = basemap.state !== "ready" && basemap.state !== "external";
   const tokens = themeTokens(theme);
   return (
@@ -83,7 +81,7 @@ export function TrackCanvas(props: TrackCanvasProps) {
       <MapView
         ref={mapRef}
         mapLib={maplibre}
-        initialViewState={{ bounds: [...bounds], fitBoundsOptions: FIT }}
+        initialViewState={{ bounds: box, fitBoundsOptions: FIT }}
         mapStyle={styleOf(basemap, theme)}
         locale={words(props.label)}
         transformRequest={wholeAddress}
@@ -96,7 +94,12 @@ export function TrackCanvas(props: TrackCanvasProps) {
         maxZoom={18}
         minZoom={1}
         cursor="crosshair"
-        onLoad={(event) => setMap(event.target)}
+        onLoad={(event) => {
+          // A container measured before the style sheet came keeps its first size otherwise.
+          event.target.resize();
+          event.target.fitBounds(box, { ...FIT, duration: 0 });
+          setMap(event.target);
+        }}
         onError={(event) => {
           if (event.target === null) props.onFailure();
         }}

@@ -22,11 +22,19 @@ export type TrackMapStaticProps = {
   className?: string;
 };
 
+/** Kept free at the bottom for the scale bar. */
+const STRIP_PX = 28;
+
 /** The track as a drawing without a map under it: for paper, for browsers that draw no maps, for lists. */
 export function TrackMapStatic(props: TrackMapStaticProps) {
   const { series, scale, widthPx, heightPx, label, distanceUnit, places = [], className } = props;
   const drawing = useMemo(
-    () => staticPaths(trackShape(series), scale, { widthPx, heightPx, marginPx: distanceUnit ? 32 : 5 }),
+    () =>
+      staticPaths(trackShape(series), scale, {
+        widthPx,
+        heightPx: distanceUnit ? heightPx - STRIP_PX : heightPx,
+        marginPx: distanceUnit ? 32 : 5,
+      }),
     [series, scale, widthPx, heightPx, distanceUnit],
   );
   if (drawing === null) return <p className={className}>There is no track on the water to draw.</p>;
@@ -56,15 +64,12 @@ export function TrackMapStatic(props: TrackMapStaticProps) {
       {places.map((place) => {
         const [x, y] = drawing.place(place.lon, place.lat);
         return (
-          <text
-            key={`${place.name} ${x} ${y}`}
-            x={x}
-            y={y}
-            textAnchor="middle"
-            className="fill-ink text-xs font-semibold"
-          >
-            {place.name}
-          </text>
+          <g key={`${place.name} ${x} ${y}`}>
+            <rect x={x - 2} y={y - 2} width={4} height={4} className="fill-ink" />
+            <text x={x} y={y + 13} textAnchor="middle" className="fill-ink text-[11px] font-semibold">
+              {place.name}
+            </text>
+          </g>
         );
       })}
     </svg>
@@ -104,8 +109,8 @@ function Furniture({ drawing, unit, widthPx, heightPx }: FurnitureProps) {
       </text>
       {bar && (
         <>
-          <path d={`M8 ${heightPx - 14}v6h${bar.widthPx}v-6`} fill="none" className="stroke-ink" />
-          <text x={8} y={heightPx - 18} className="fill-ink font-mono text-[11px]">
+          <path d={`M8 ${heightPx - 12}v6h${bar.widthPx}v-6`} fill="none" className="stroke-ink" />
+          <text x={8} y={heightPx - 15} className="fill-ink font-mono text-[11px]">
             {bar.label}
           </text>
         </>

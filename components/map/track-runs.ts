@@ -26,7 +26,7 @@ const HYSTERESIS = 0.15;
  */
 export function trackRuns(shape: TrackShape, options: RunOptions): Run[] {
   const { scale, stretch = null, toleranceM = 1.5, meanOverM = 0 } = options;
-  const speeds = meanOverM > 0 ? meanSpeeds(shape, meanOverM) : shape.series.speedMps;
+  const speeds = meanOverM > 0 ? keptMeanSpeeds(shape, meanOverM) : shape.series.speedMps;
   const { first, end } = sampleRange(shape.series, stretch);
   const runs: Run[] = [];
   let start = -1;
@@ -64,6 +64,17 @@ function kindOf(
   const margin = (HYSTERESIS * (scale.highMps - scale.lowMps)) / SPEED_BANDS;
   const eased = speedBand(band > previous ? speed - margin : speed + margin, scale);
   return eased === previous ? previous : band;
+}
+
+/** Means already worked out: every brushed stretch of a session asks for the same ones. */
+const kept = new WeakMap<TrackShape, Map<number, Float32Array>>();
+
+function keptMeanSpeeds(shape: TrackShape, lengthM: number): Float32Array {
+  const ofShape = kept.get(shape) ?? new Map<number, Float32Array>();
+  kept.set(shape, ofShape);
+  const speeds = ofShape.get(lengthM) ?? meanSpeeds(shape, lengthM);
+  ofShape.set(lengthM, speeds);
+  return speeds;
 }
 
 /**
@@ -133,7 +144,7 @@ function thin(shape: TrackShape, first: number, last: number, toleranceM: number
       stack.push(a, farthest, farthest, b);
     }
   }
-  const kept: number[] = [];
-  for (let i = 0; i < keep.length; i += 1) if (keep[i] === 1) kept.push(first + i);
-  return kept;
+  const samples: number[] = [];
+  for (let i = 0; i < keep.length; i += 1) if (keep[i] === 1) samples.push(first + i);
+  return samples;
 }
