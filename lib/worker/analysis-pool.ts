@@ -39,16 +39,27 @@ export function createAnalysisPool(options: AnalysisPoolOptions): AnalysisPool {
     minThreads: 0,
     maxThreads: limits.threads,
     idleTimeout: 30_000,
-    maxQueue: limits.queueMax,
     resourceLimits: { maxOldGenerationSizeMb: limits.heapMbMax, maxYoungGenerationSizeMb: 32 },
     // A reader of strangers' files gets none of the server's settings.
     env: {},
     execArgv: [],
   });
-  return {
-    run: (task, onProgress) => runTask(piscina, task, { timeLimitMs: limits.timeLimitMs, onProgress }),
-    close: () => piscina.destroy(),
+  let open = 0;
+  const run: AnalysisPool["run"] = async (task, onProgress) => {
+    if (open >= limits.threads + limits.queueMax) {
+      throw new AppError(
+        "limit_exceeded",
+        "Many files are being read just now. This one is safe; read it in a minute.",
+      );
+    }
+    open += 1;
+    try {
+      return await runTask(piscina, task, { timeLimitMs: limits.timeLimitMs, onProgress });
+    } finally {
+      open -= 1;
+    }
   };
+  return { run, close: () => piscina.destroy() };
 }
 
 async function runTask(
@@ -71,12 +82,6 @@ async function runTask(
   } catch (error) {
     if (stop.signal.aborted) return [refused("took_too_long")];
     if (codeOf(error) === "ERR_WORKER_OUT_OF_MEMORY") return [refused("out_of_memory")];
-    if (error instanceof Error && error.message.includes("queue is at limit")) {
-      throw new AppError(
-        "limit_exceeded",
-        "Many files are being read just now. This one is safe; read it in a minute.",
-      );
-    }
     throw error;
   } finally {
     clearTimeout(timer);

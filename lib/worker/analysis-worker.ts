@@ -8,6 +8,7 @@ import { readFile, type FileRead, type ReadOutcome } from "@/lib/formats/read-fi
 import { harmlessName } from "@/lib/formats/unzip";
 import { encodeSeries } from "@/lib/track/series-blob";
 import { prepareTrack } from "@/lib/track/prepare-track";
+import type { Fixes } from "@/lib/track/fixes";
 import type { SpeedSeries } from "@/lib/track/speed-series";
 import { timeZoneAt } from "@/lib/track/time-zone";
 import type { AnalysisProgress, AnalysisTask, Position, TrackOutcome, WorkerMessage } from "./analysis-task";
@@ -15,6 +16,9 @@ import { guessDiscipline } from "./guess-discipline";
 
 /** Reading alone is given up before the pool ends the whole worker. */
 const READ_TIME_MS = 30_000;
+
+/** Longer than any outing; the uniform clock of a longer one would fill the memory with nothing. */
+const SPAN_MS_MAX = 48 * 3_600_000;
 
 /** The pool calls this in a worker thread: one file in, one outcome for each track in it. */
 export default async function analyseFile({ task, progress }: WorkerMessage): Promise<TrackOutcome[]> {
@@ -54,6 +58,16 @@ function withEntryNames(outcomes: ReadOutcome[], fileName: string) {
 }
 
 function analysed(entryName: string, read: FileRead, task: AnalysisTask): TrackOutcome {
+  const spanMs = middleSpanMs(read.fixes);
+  if (spanMs > SPAN_MS_MAX) {
+    const days = Math.round(spanMs / 86_400_000).toLocaleString("en");
+    return {
+      kind: "refused",
+      entryName,
+      code: "no_track",
+      text: `The recording spans ${days} days, more than one outing can last. Export the outings one by one and upload those.`,
+    };
+  }
   const prepared = prepareTrack(read.fixes, { trim: task.trim });
   const discipline = task.discipline ?? guessDiscipline(prepared);
   const analysis = analysePrepared(prepared, {
@@ -82,6 +96,14 @@ function analysed(entryName: string, read: FileRead, task: AnalysisTask): TrackO
     ...listsOf(analysis),
     quality: { ...analysis.quality, notes: [...read.notes, ...analysis.quality.notes] },
   };
+}
+
+/** Time from the early to the late fixes, a twentieth at either end aside: a clock that was not set yet is no long recording. */
+function middleSpanMs({ timeMs }: Fixes): number {
+  const sorted = Float64Array.from(timeMs).sort();
+  const early = sorted[Math.floor(0.05 * (sorted.length - 1))] ?? 0;
+  const late = sorted[Math.ceil(0.95 * (sorted.length - 1))] ?? 0;
+  return late - early;
 }
 
 function listsOf(analysis: Analysis) {
