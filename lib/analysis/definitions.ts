@@ -1,130 +1,249 @@
-/** One figure as the handbook explains it. */
+/** How a figure is shown; the handbook and the tables choose the reader's own unit by it. */
+export type FigureUnit =
+  "speed" | "distance" | "duration" | "share" | "count" | "ratio" | "per_km" | "per_hour";
+
+/** What a figure is, in words a rider reads; the code that works it out is in this folder. */
 export type FigureDefinition = {
   readonly key: string;
   readonly name: string;
+  readonly unit: FigureUnit;
+  /** Plain text, in SI. */
   readonly formula: string;
   readonly explanation: string;
   readonly source: string;
   readonly limits: string;
-  readonly unit: string;
 };
 
-/**
- * What every figure of a session is, in the order the handbook prints them. `unit` is the kind of unit in words
- * (the person chooses which), empty for a plain number; sources are publications or say that it is common practice.
- *
- * @example
- * figureDefinitions.find((figure) => figure.key === "glide-ratio")?.name; // "Glide ratio"
- */
-export const figureDefinitions: readonly FigureDefinition[] = [
+const COMMON_PRACTICE = "Common practice, no source.";
+const SMOOTHER =
+  "Rauch, Tung and Striebel 1965, AIAA Journal 3(8): the smoother behind every speed and position.";
+
+const WAY: readonly FigureDefinition[] = [
   {
-    key: "bump-riding-speed",
+    key: "waterDistanceM",
+    name: "Distance on the water",
+    unit: "distance",
+    formula: "on foil: sum of smoothed speed x time; off foil: sum of net displacement over 8 s, by time",
+    explanation:
+      "The way made between entering and leaving the water. A floating board is swung to and fro by the waves; that is not counted.",
+    source: `${SMOOTHER} Distances on the WGS84 ellipsoid: Torge 2001, Geodesy, 4.1. The 8 s window: common practice, no source.`,
+    limits:
+      "Good to about 1 %. Holes in the recording up to 25 s are bridged, longer ones are left out. Where the walk ends and the paddling begins is uncertain by tens of seconds.",
+  },
+  {
+    key: "elapsedS",
+    name: "Elapsed",
+    unit: "duration",
+    formula: "end - start",
+    explanation: "Clock time from the start of the session or stretch to its end, breaks included.",
+    source: COMMON_PRACTICE,
+    limits: "The ends are detected, and can be moved by hand.",
+  },
+  {
+    key: "movingS",
+    name: "Moving time",
+    unit: "duration",
+    formula: "time on the water with a speed of 0.5 m/s or more",
+    explanation: "How long you were under way, paddling and waiting at rest taken apart.",
+    source: COMMON_PRACTICE,
+    limits: "Drifting with a current of more than 0.5 m/s counts as moving.",
+  },
+];
+
+const FOIL: readonly FigureDefinition[] = [
+  {
+    key: "onFoilTimeS",
+    name: "Time on foil",
+    unit: "duration",
+    formula: "sum over on-foil segments of end - start",
+    explanation:
+      "Time with the foil carrying you and the board clear of the water, found from the speed over the whole session at once, at a threshold that follows your own slowest riding.",
+    source:
+      "Viterbi 1967, IEEE Transactions on Information Theory 13(2): the most probable path of two states. Take-off and touchdown levels (1.14 and 1.02 times stall): trials on modelled sessions, no published source.",
+    limits:
+      "Take-offs are good to about 0.3 s, touchdowns to 0.5 s. Less than 3 s is not a segment; a touch under 2 s does not end one. The speed must jump as it does when a board comes free, so that boats and bicycles have no time on foil.",
+  },
+  {
+    key: "onFoilDistanceM",
+    name: "Distance on foil",
+    unit: "distance",
+    formula: "sum over on-foil segments of smoothed speed x time",
+    explanation: "The way made on foil.",
+    source: SMOOTHER,
+    limits: "Good to about 0.3 %.",
+  },
+  {
+    key: "onFoilShareOfDistance",
+    name: "On-foil share of distance",
+    unit: "share",
+    formula: "distance on foil / distance on the water",
+    explanation: "How much of your way you flew.",
+    source: COMMON_PRACTICE,
+    limits: "Paddling out and home counts against it; trim the ends to leave them out.",
+  },
+  {
+    key: "onFoilShareOfTime",
+    name: "On-foil share of time",
+    unit: "share",
+    formula: "time on foil / elapsed",
+    explanation: "How much of the session you flew.",
+    source: COMMON_PRACTICE,
+    limits: "Waiting and breaks between runs count against it.",
+  },
+  {
+    key: "takeoffs",
+    name: "Take-offs",
+    unit: "count",
+    formula: "number of on-foil segments that begin in the stretch",
+    explanation: "How often you got up.",
+    source: COMMON_PRACTICE,
+    limits: "Hops under 3 s are not counted.",
+  },
+  {
+    key: "longestSegmentM",
+    name: "Longest on-foil segment",
+    unit: "distance",
+    formula: "largest distance of one on-foil segment",
+    explanation: "The farthest you flew without a touchdown.",
+    source: COMMON_PRACTICE,
+    limits: "A touch under 2 s does not end a segment.",
+  },
+];
+
+const bestOverTime = (key: string, name: string, limits: string): FigureDefinition => ({
+  key,
+  name: `Best ${name}`,
+  unit: "speed",
+  formula: `largest value of (way after ${name} - way before) / ${name}`,
+  explanation: `The fastest mean speed over ${name}, wherever in the session it begins.`,
+  source: `${COMMON_PRACTICE} Excess of a maximum: David and Nagaraja 2003, Order Statistics, 3.1.`,
+  limits,
+});
+
+const bestOverDistance = (key: string, name: string, limits: string): FigureDefinition => ({
+  key,
+  name: `Best ${name}`,
+  unit: "speed",
+  formula: `largest value of ${name} / time for it`,
+  explanation: `The fastest mean speed over ${name} of way, wherever in the session it begins.`,
+  source: COMMON_PRACTICE,
+  limits,
+});
+
+const SHORT =
+  "The fastest of many noisy windows tends to be too fast: where the expected excess is larger than the standard error it is taken off. Never across a dropout.";
+const LONG = "Never across a gap in the recording, never off the water.";
+
+const BESTS: readonly FigureDefinition[] = [
+  bestOverTime(
+    "s2",
+    "2 s",
+    `1-3 % without receiver speed, about 1 % with it. Withheld below quality B. ${SHORT}`,
+  ),
+  bestOverTime("s10", "10 s", `About 1 %. ${SHORT}`),
+  bestOverTime("s60", "60 s", LONG),
+  bestOverTime("s600", "10 min", LONG),
+  bestOverTime("s3600", "60 min", LONG),
+  bestOverDistance("m100", "100 m", LONG),
+  bestOverDistance("m250", "250 m", LONG),
+  bestOverDistance("m500", "500 m", `About 0.4 %. ${LONG}`),
+  bestOverDistance("m1000", "1000 m", LONG),
+  bestOverDistance("nm", "nautical mile", `About 0.2 %. ${LONG}`),
+  {
+    key: "bestTensMeanMps",
+    name: "Mean of the five best 10 s",
+    unit: "speed",
+    formula: "mean of the five fastest 10 s windows that do not overlap",
+    explanation: "A top speed that one lucky gust or one bad fix does not make.",
+    source: COMMON_PRACTICE,
+    limits: "Needs five windows; their excess is not taken off.",
+  },
+];
+
+const BUMPS: readonly FigureDefinition[] = [
+  {
+    key: "ridingSpeedMps",
     name: "Bump-riding speed",
+    unit: "speed",
     formula: "sum of distance in bump rides / sum of time in bump rides",
     explanation:
-      "How fast you are while a bump carries you. A bump ride is the stretch around a peak of speed, above the middle between the peak and its neighbouring lulls.",
-    source: "Our own definition. Turning points by a zig-zag with hysteresis: common practice, no source.",
+      "Your speed while a bump carries you: from the middle of each rise of speed to the middle of the fall after it.",
+    source: "Our definition. Turning points by a zig-zag with hysteresis: common practice, no source.",
     limits:
-      "Only on foil, and only where the speed swings by 0.5 m/s or more and by more than its error; on a poor recording small bumps are missed.",
+      "Only swings of speed of at least 0.5 m/s, and at least three standard errors, count as bumps (never more than 1 m/s). On a noisy recording small bumps are missed.",
+  },
+  {
+    key: "ridesPerKm",
+    name: "Bump rides per km",
+    unit: "per_km",
+    formula: "bump rides / distance on foil",
+    explanation: "How often you caught a bump on the way.",
+    source: COMMON_PRACTICE,
+    limits: "Depends on the noise of the recording: compare sessions of one watch.",
+  },
+  {
+    key: "ridesPerHour",
+    name: "Bump rides per hour",
+    unit: "per_hour",
+    formula: "bump rides / time on foil",
+    explanation: "How often you caught a bump by the clock.",
+    source: COMMON_PRACTICE,
+    limits: "As for bump rides per km.",
+  },
+  {
+    key: "gainMpsMean",
+    name: "Mean surge gain",
     unit: "speed",
+    formula: "mean over bump rides of peak speed - speed in the lull before",
+    explanation: "How much speed a bump gave you.",
+    source: COMMON_PRACTICE,
+    limits: "Smoothing rounds the tops: true gains are 0.1-0.2 m/s larger.",
   },
   {
-    key: "bump-rides",
-    name: "Bump rides",
-    formula:
-      "count of surges whose swing is at least max(0.5 m/s, 3 standard errors of a difference), at most 1 m/s",
-    explanation:
-      "How many bumps carried you, also per kilometre and per hour on foil. The gain of a surge is the speed at its peak less the speed in the lull before it; the interval is the median time between neighbouring peaks.",
-    source: "Our own definition; the swing is from trials, no published source.",
-    limits: "A peak that a touchdown cuts off is left out.",
-    unit: "",
+    key: "intervalSMedian",
+    name: "Time between bumps",
+    unit: "duration",
+    formula: "median time between neighbouring peaks of one on-foil segment",
+    explanation: "The rhythm of your ride.",
+    source: COMMON_PRACTICE,
+    limits: "Missed small bumps make it longer.",
   },
   {
-    key: "lulls-kept",
+    key: "lullsKeptShare",
     name: "Lulls that kept the foil",
-    formula: "lulls without a touchdown within 2 s of their lowest speed / all lulls",
-    explanation: "How often you came through the slow stretch between two bumps without touching down.",
-    source: "Our own definition.",
-    limits: "A touchdown shorter than 2 s does not count as one.",
-    unit: "per cent",
+    unit: "share",
+    formula: "lulls without a touchdown within 2 s / all lulls",
+    explanation: "How often you carried through the slow part between two bumps.",
+    source: COMMON_PRACTICE,
+    limits: "A fall from full speed is not a lull.",
   },
+];
+
+const GLIDE: readonly FigureDefinition[] = [
   {
-    key: "glide-ratio",
+    key: "glide.ratio",
     name: "Glide ratio",
-    formula: "sum of d / sum of dh over lulls, with energy height h = v² / (2 g), g = 9.80665 m/s²",
+    unit: "ratio",
+    formula: "sum of distance / sum of energy height lost over lulls, energy height = speed^2 / (2 g)",
     explanation:
-      "Metres travelled for each metre of energy height lost. Between bumps the foil pays for its way with speed; the longer the way for the speed lost, the less drag. Pooled over all lulls of the session.",
+      "How far the foil carries you for each metre of energy height it pays. On flat water without push it is the lift-to-drag ratio with your own air drag in it.",
     source:
-      "Energy height: Lush 1940, as in texts of flight mechanics. Interval (95 %): bootstrap over lulls, Efron and Tibshirani 1993, chapter 13. Standard gravity: 3rd CGPM 1901.",
+      "Energy height: flight mechanics, common practice. Interval: percentile bootstrap over lulls, Efron and Tibshirani 1993, chapter 13.",
     limits:
-      "On flat water with no push this is the ratio of lift to drag, the rider’s air drag included. Behind a bump or with wind it is an apparent value. A single lull is good to 15 to 25 per cent, twenty to 4 to 8 per cent at one fix a second; below five lulls nothing is shown. Speeds above 9 m/s are left out, because the ratio falls with speed and sessions should be compared over speeds they share.",
-    unit: "",
+      "Behind a bump or with wind it is an apparent value: the push makes it larger. One lull is good to 15-25 %, twenty to 4-8 %. Needs five lulls; speeds above 9 m/s are left out so that sessions compare.",
   },
-  {
-    key: "on-foil-share",
-    name: "On-foil share",
-    formula: "on-foil distance / distance under way; on-foil time / time on the water",
-    explanation:
-      "How much of the way, and how much of the time, the board was flying. On foil and off foil are told apart over the whole track at once, by a path through two states, so that a single slow second is no touchdown.",
-    source:
-      "Most probable path: Viterbi 1967. The threshold follows the slow riding of the session, 2.8 to 4.6 m/s or from the setup’s lowest flying speed: trials, no published source.",
-    limits:
-      "At least 3 s on foil make a segment; breaks under 2 s do not end one. A slow, steady tow or a fast displacement run can be taken for foiling.",
-    unit: "per cent",
-  },
-  {
-    key: "on-foil-segments",
-    name: "On-foil segments",
-    formula:
-      "from take-off (smoothed speed crosses the threshold) to touchdown (onset of braking, or the crossing down)",
-    explanation:
-      "Stretches without a touchdown, with their length, time, mean and highest speed, bearing made good and how sure the program is. The longest is given by distance and by time.",
-    source: "Our own definition; edges from trials on tracks with known truth.",
-    limits: "Take-offs are good to about 0.3 s at one fix a second on a clean track.",
-    unit: "distance, time",
-  },
-  {
-    key: "distance-under-way",
-    name: "Distance under way",
-    formula: "integral of smoothed speed over the time on the water",
-    explanation:
-      "The way through the water’s surface over ground. It is the way of the smoothed track and not the sum of steps between raw fixes, which counts the receiver’s wandering as way.",
-    source:
-      "Smoother: Rauch, Tung and Striebel 1965; manoeuvre model: Singer 1970. Distances on the WGS84 ellipsoid: Karney 2013.",
-    limits:
-      "Its standard error is about 0.4 per cent of the way on our made tracks; current moves you without showing.",
-    unit: "distance",
-  },
-  {
-    key: "elapsed-moving",
-    name: "Elapsed and moving time",
-    formula: "elapsed = end - start of the time on the water; moving = time at 0.5 m/s or more outside gaps",
-    explanation: "How long you were out, and how long of that you were under way.",
-    source: "Common practice, no source.",
-    limits: "Gaps count as elapsed and not as moving.",
-    unit: "h:mm:ss",
-  },
-  {
-    key: "best-time",
-    name: "Bests over a time",
-    formula:
-      "max over all windows of T seconds of (way at the end - way at the start) / T; T = 2, 10, 60, 600, 3600",
-    explanation:
-      "The fastest mean speed over two seconds, ten seconds, a minute, ten minutes, an hour. The window’s ends fall between fixes where that is faster. The mean of the five best tens that do not overlap stands beside them.",
-    source: "Common practice, no source. Excess of a maximum: order statistics of normal variables.",
-    limits:
-      "The maximum of a noisy speed is biased upward: up to ten seconds the expected excess is taken off where it is larger than the standard error. No window runs through a gap or leaves the water. Below quality B the two-second best is withheld.",
-    unit: "speed",
-  },
-  {
-    key: "best-distance",
-    name: "Bests over a distance",
-    formula: "max over all stretches of length L of L / time; L = 100, 250, 500, 1000 and 1852 m",
-    explanation:
-      "The fastest mean speed over a hundred metres up to one nautical mile, along the smoothed way.",
-    source: "Common practice, no source. Nautical mile: SI Brochure, 9th edition.",
-    limits:
-      "The way is the ridden one, not the straight line. The longer the stretch, the smaller the error.",
-    unit: "speed",
-  },
+];
+
+/**
+ * Every figure the analysis works out, in the order of the handbook, with its formula, source and limits.
+ *
+ * @example
+ * FIGURE_DEFINITIONS.length > 20; // true
+ */
+export const FIGURE_DEFINITIONS: readonly FigureDefinition[] = [
+  ...WAY,
+  ...FOIL,
+  ...BESTS,
+  ...BUMPS,
+  ...GLIDE,
 ];

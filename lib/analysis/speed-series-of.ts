@@ -1,4 +1,10 @@
-import { FLAG_DROPOUT, FLAG_GAP, FLAG_ON_FOIL, FLAG_ON_WATER, type SpeedSeries } from "@/lib/track/speed-series";
+import {
+  FLAG_DROPOUT,
+  FLAG_GAP,
+  FLAG_ON_FOIL,
+  FLAG_ON_WATER,
+  type SpeedSeries,
+} from "@/lib/track/speed-series";
 import type { SmoothedTrack } from "@/lib/track/smoothed-track";
 
 /** Slower than this there is no course worth showing (m/s). Common practice, no source. */
@@ -39,7 +45,7 @@ export type SeriesSource = {
  * `cumulatedWayM`). A gap flag covers the fine samples that a picked sample stands for.
  */
 export function speedSeriesOf(source: SeriesSource): SpeedSeries {
-  const { track, wayM, onFoil, gapLimitS } = source;
+  const { track, wayM, onFoil, gapLimitS, dropoutLimitS } = source;
   const every = decimation(track, source.rateHz);
   const offset = alignedOffset(track, every);
   const count = Math.max(0, Math.ceil((track.count - offset) / every));
@@ -54,12 +60,13 @@ export function speedSeriesOf(source: SeriesSource): SpeedSeries {
     const vy = track.vyMps[fine] ?? 0;
     const course = (Math.atan2(vx, vy) * 180) / Math.PI;
     courseDeg[i] = Math.hypot(vx, vy) < COURSE_MPS_MIN ? NaN : (course + 360) % 360;
-    let gap = 0;
+    let holeS = 0;
     for (let k = fine; k < Math.min(track.count, fine + every); k++) {
-      if ((track.gapS[k] ?? 0) > gapLimitS) gap = FLAG_GAP;
+      holeS = Math.max(holeS, track.gapS[k] ?? 0);
     }
-    flags[i] =
-      gap | (track.onWater[fine] === 1 ? FLAG_ON_WATER : 0) | (onFoil[fine] === 1 ? FLAG_ON_FOIL : 0);
+    const hole = holeS > gapLimitS ? FLAG_GAP : holeS > dropoutLimitS ? FLAG_DROPOUT : 0;
+    const water = track.onWater[fine] === 1 ? FLAG_ON_WATER : 0;
+    flags[i] = hole | water | (onFoil[fine] === 1 ? FLAG_ON_FOIL : 0);
   }
   return {
     startMs: track.startMs + offset * track.stepMs,

@@ -222,19 +222,24 @@ describe("summarise", () => {
     expect(numbers.every(Number.isFinite)).toBe(true);
   });
 
-  it("takes under 30 ms for 144,000 samples", () => {
+  it("costs no more than sorting the 144,000 speeds three times (under 30 ms on a quiet machine)", () => {
     const n = 144_000;
     const series = seriesOf(
       Array.from({ length: n }, (_, i) => 6 + 2 * Math.sin(i / 1.4) * Math.sin(i / 700)),
       0.2,
     );
     const track: AnalysedTrack = { ...analysis, series };
-    let quickest = Infinity;
-    for (let k = 0; k < 7; k++) {
-      const from = performance.now();
-      summarise(track, whole(series));
-      quickest = Math.min(quickest, performance.now() - from);
-    }
-    expect(quickest).toBeLessThan(30);
+    const quickest = (work: () => unknown): number => {
+      let least = Infinity;
+      for (let k = 0; k < 12; k++) {
+        const from = performance.now();
+        work();
+        least = Math.min(least, performance.now() - from);
+      }
+      return least;
+    };
+    // A ratio, so that a busy machine slows both.
+    const sorting = quickest(() => Float64Array.from(series.speedMps).sort());
+    expect(quickest(() => summarise(track, whole(series)))).toBeLessThan(3 * sorting);
   });
 });
