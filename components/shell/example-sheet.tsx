@@ -38,7 +38,7 @@ export function ExampleSheet() {
         A downwinder with {RUN.segments.length} on-foil segments. After {EXAMPLE_SWAP_MINUTE} minutes half a
         degree was added under the rear wing. The figures of the run follow.
       </p>
-      <div className="grid lg:grid-cols-[minmax(0,1fr)_19rem]">
+      <div className="grid lg:grid-cols-[minmax(0,1fr)_22rem]">
         <div aria-hidden="true" className="min-w-0 py-3">
           <Drawings />
         </div>

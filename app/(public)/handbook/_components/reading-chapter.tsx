@@ -99,7 +99,7 @@ export const readingChapter: Chapter = {
       body: (
         <p>
           A hole longer than 5 s, or four times the usual step, is a gap. Gaps stay gaps: no best runs through
-          one. A short dropout, water over the antenna, is bridged for the distance under way.
+          one. A short dropout (water over the antenna, up to 25 s) is bridged for the distance under way.
         </p>
       ),
     },
