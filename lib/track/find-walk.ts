@@ -15,8 +15,9 @@ const EVIDENCE_MAX_OUT = 6;
 const CHANGE_WEIGHT = 0.25;
 /** Weight of the dip in speed when the board is put down. */
 const DIP_WEIGHT = 2.2;
-/** Beginning afloat is the rule at the end of a session less often than at its start. */
-const WALK_OUT_PRIOR = -1.5;
+/** What a walk must beat: some start from a boat or step off the beach straight into the water, few end that way. */
+const NO_WALK_IN_SCORE = 1;
+const NO_WALK_OUT_SCORE = -1.5;
 
 const normal = (v: number, mean: number, sd: number) =>
   Math.exp(-0.5 * ((v - mean) / sd) ** 2) / (sd * Math.sqrt(2 * Math.PI));
@@ -47,7 +48,7 @@ export function walkLengthS(motion: CoarseMotion, search: WalkSearch): number {
     limitMps: SURELY_RIDING_MPS,
     seMps: seTypical,
   });
-  let best = { score: search.entry ? 0 : WALK_OUT_PRIOR, lengthS: 0 };
+  let best = { score: search.entry ? NO_WALK_IN_SCORE : NO_WALK_OUT_SCORE, lengthS: 0 };
   for (let pace = 0.85; pace < 1.46; pace += 0.06) {
     const found = bestAtPace(motion, search, { pace, seTypical, seconds, change });
     if (found.score > best.score) best = found;
