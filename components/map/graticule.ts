@@ -2,7 +2,7 @@ import { at } from "@/lib/errors/invariant";
 import type { Bounds } from "./track-shape";
 
 /** Spacings of charts, minutes of arc: whole parts of a degree. Source: common practice, no source. */
-const STEPS_MIN = [0.5, 1, 2, 5, 10, 30, 60, 300, 600];
+const STEPS_MIN = [1, 2, 5, 10, 30, 60, 300, 600];
 
 export type Graticule = {
   readonly lines: GeoJSON.FeatureCollection<GeoJSON.MultiLineString>;

@@ -28,7 +28,7 @@ export function SpeedLegend({ scale, unit }: SpeedLegendProps) {
                 y1="4"
                 y2="4"
                 stroke={light[band]}
-                className="dark:hidden"
+                className="dark:hidden print:inline"
               />
               <line
                 x1={band * 28}
@@ -36,7 +36,7 @@ export function SpeedLegend({ scale, unit }: SpeedLegendProps) {
                 y1="4"
                 y2="4"
                 stroke={dark[band]}
-                className="hidden dark:inline"
+                className="hidden dark:inline print:hidden"
               />
             </g>
           ))}
@@ -59,11 +59,11 @@ export function SpeedLegend({ scale, unit }: SpeedLegendProps) {
         <svg viewBox="0 0 12 12" className="stroke-ink fill-sheet w-3">
           <circle cx="6" cy="6" r="4.5" strokeWidth="2" />
         </svg>
-        first
+        start
         <svg viewBox="0 0 12 12" className="stroke-ink fill-ink w-3">
           <circle cx="6" cy="6" r="4.5" strokeWidth="2" />
         </svg>
-        last
+        end
       </div>
     </div>
   );

@@ -8,6 +8,7 @@ import { type Theme, themeTokens } from "@/lib/display/theme-tokens";
 import type { TimeCursor } from "@/lib/display/time-cursor";
 import type { Stretch } from "@/lib/track/speed-series";
 import type { DistanceUnit } from "@/lib/units/length";
+import { fitBox } from "./fit-box";
 import { graticule } from "./graticule";
 import { MapButtons } from "./map-buttons";
 import { ScaleBar } from "./scale-bar";
@@ -19,7 +20,7 @@ import type { Bounds, TrackShape } from "./track-shape";
 import type { Basemap } from "./use-basemap";
 import { useCursorDot } from "./use-cursor-dot";
 import { useCursorPointer } from "./use-cursor-pointer";
-import { useTheme } from "./use-theme";
+import { useTheme } from "@/components/ui/use-theme";
 
 // The bundler cannot find the worker on its own: without its address the map stays blank.
 maplibre.setWorkerUrl(new URL("maplibre-gl/dist/maplibre-gl-worker.mjs", import.meta.url).toString());
@@ -37,7 +38,7 @@ export type TrackCanvasProps = {
   onFailure: () => void;
 };
 
-const FIT = { padding: { top: 56, bottom: 56, left: 40, right: 72 }, maxZoom: 16.5 } as const;
+const FIT = { padding: { top: 56, bottom: 72, left: 48, right: 72 }, maxZoom: 16.5 } as const;
 
 /** Set off from land and water by a rim of the sheet's colour. */
 const PLACE =
@@ -72,7 +73,7 @@ export function TrackCanvas(props: TrackCanvasProps) {
     map?.keyboard.disableRotation();
     map?.touchZoomRotate.disableRotation();
   }, [map]);
-  const box = useMemo((): [number, number, number, number] => [...bounds], [bounds]);
+  const box = useMemo(() => fitBox(bounds, props.places), [bounds, props.places]);
   const showWhole = useCallback(() => map?.fitBounds(box, { ...FIT, duration: 400 }), [map, box]);
   const plain = basemap.state !== "ready" && basemap.state !== "external";
   const tokens = themeTokens(theme);

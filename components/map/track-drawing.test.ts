@@ -1,6 +1,7 @@
 import { describe, expect, it } from "vitest";
 import { SPEED_BANDS } from "@/lib/display/speed-ramp";
 import { FLAG_GAP, FLAG_ON_FOIL, FLAG_ON_WATER, type SpeedSeries } from "@/lib/track/speed-series";
+import { fitBox } from "./fit-box";
 import { graticule } from "./graticule";
 import { nearestSample } from "./nearest-sample";
 import { scaleBarLength } from "./scale-bar-length";
@@ -291,6 +292,20 @@ describe("scaleBarLength", () => {
   it("has no bar before there is a map", () => {
     expect(scaleBarLength(0, 110, "km")).toBeNull();
     expect(scaleBarLength(Number.NaN, 110, "km")).toBeNull();
+  });
+});
+
+describe("fitBox", () => {
+  it("takes in places beside the track and leaves far ones out", () => {
+    const places = [
+      { name: "beside", lat: 56.95, lon: 9.1 },
+      { name: "far", lat: 50, lon: 9.1 },
+    ];
+    expect(fitBox([9, 57, 10, 57.4], places)).toEqual([9, 56.95, 10, 57.4]);
+    expect(fitBox([179.5, 0, 180.5, 0.4], [{ name: "over the line", lat: 0.2, lon: -179.4 }])[2]).toBeCloseTo(
+      180.6,
+      9,
+    );
   });
 });
 

@@ -2,16 +2,18 @@
 import dynamic from "next/dynamic";
 import { useMemo, useState, useSyncExternalStore } from "react";
 import { classNames } from "@/lib/display/class-names";
+import { formatNumber } from "@/lib/display/format-number";
 import { LAND_ATTRIBUTION, LAND_ATTRIBUTION_URL } from "@/lib/display/land-attribution";
 import type { SpeedScale } from "@/lib/display/speed-ramp";
 import type { TimeCursor } from "@/lib/display/time-cursor";
 import type { SpeedSeries, Stretch } from "@/lib/track/speed-series";
 import type { DistanceUnit } from "@/lib/units/length";
 import type { SpeedUnit } from "@/lib/units/speed";
+import { graticule } from "./graticule";
 import type { Place } from "./place";
 import { SpeedLegend } from "./speed-legend";
 import { TrackMapStatic } from "./track-map-static";
-import { trackShape } from "./track-shape";
+import { type Bounds, trackShape } from "./track-shape";
 import { trackSpeedScale } from "./track-speed-scale";
 import { type Basemap, useBasemap } from "./use-basemap";
 import { WindRose } from "./wind-rose";
@@ -85,7 +87,7 @@ export function TrackMap(props: TrackMapProps) {
           <TrackMapStatic {...drawing} className="absolute inset-0 size-full" />
         )}
         {moving && <WindRose windFromDeg={props.windFromDeg ?? null} />}
-        <MapNote basemap={basemap} moving={moving} empty={shape.bounds === null} />
+        <MapNote basemap={basemap} moving={moving} bounds={shape.bounds} />
         {moving && basemap.state === "ready" && <Attribution text={props.attribution} />}
       </div>
       <TrackMapStatic {...drawing} className="hidden w-full border print:block" />
@@ -113,20 +115,22 @@ function hasWebGl(): boolean {
   return webGl;
 }
 
-function noteText(basemap: Basemap, moving: boolean, empty: boolean): string {
-  if (empty) return "";
+function noteText(basemap: Basemap, moving: boolean, bounds: Bounds | null): string {
+  if (bounds === null) return "";
   if (!moving) return "This browser cannot draw the moving map, so the track is drawn alone.";
+  const lines = `Lines are ${formatNumber(graticule(bounds).stepMin, 0)}′ apart.`;
   if (basemap.state === "preparing") {
-    return `The coastline is being prepared (${Math.round(basemap.share * 100)} %).`;
+    return `The coastline is being prepared (${Math.round(basemap.share * 100)}\u00a0%). ${lines}`;
   }
-  if (basemap.state === "missing")
-    return "The coastline is not on this server; the track is drawn without it.";
-  if (basemap.state === "unreachable") return "The server does not answer, so the coastline is missing.";
+  if (basemap.state === "missing") return `The coastline is not on this server. ${lines}`;
+  if (basemap.state === "unreachable") {
+    return `The server does not answer, so the coastline is missing. ${lines}`;
+  }
   return "";
 }
 
-function MapNote(props: { basemap: Basemap; moving: boolean; empty: boolean }) {
-  const text = noteText(props.basemap, props.moving, props.empty);
+function MapNote(props: { basemap: Basemap; moving: boolean; bounds: Bounds | null }) {
+  const text = noteText(props.basemap, props.moving, props.bounds);
   return (
     <p
       role="status"
