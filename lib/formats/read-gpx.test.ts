@@ -95,6 +95,30 @@ describe("the structure of GPX", () => {
   });
 });
 
+describe("what is ignored or missing around the track", () => {
+  it("notes routes beside a track, and a root without a namespace", async () => {
+    const document = gpxDocument(points(3))
+      .replace("<trk>", '<rte><name>Plan</name><rtept lat="57" lon="9"/></rte><trk>')
+      .replace(' xmlns="http://www.topografix.com/GPX/1/1"', "");
+    const read = await readOk(document);
+    expect([read.title, noteCount(read, "routes_ignored"), noteCount(read, "namespace_missing")]).toEqual([
+      null,
+      1,
+      1,
+    ]);
+  });
+
+  it("reads points that stand in no segment and tracks without one", async () => {
+    const read = await readOk(`<gpx xmlns="x"><trk>${points(3)}</trk><trk>${points(2, 3)}</trk></gpx>`);
+    expect([read.fixes.count, [...read.fixes.segmentStarts], read.rawSegments]).toEqual([5, [0, 3], 2]);
+  });
+
+  it("counts a recorded segment even when none of its points is usable", async () => {
+    const read = await readOk(gpxDocument(points(3), '<trkpt lat="57" lon="9"/>', ""));
+    expect([read.rawSegments, read.fixes.segmentStarts.length]).toEqual([2, 1]);
+  });
+});
+
 describe("latitude and longitude", () => {
   // Source: GPX schemas, verdicts of two validators. Row L37: 180 in GPX 1.1 is the same meridian as -180 and is kept.
   it.each(csvRows("checks/gpx_lexical.csv"))("keeps or drops $id ($attribute '$lexical')", async (row) => {
