@@ -15,7 +15,7 @@ export function ResendForm({ act, email, children }: { act: Act; email: string; 
         forgotten password cannot be set anew.
       </p>
       {state.status !== "ok" && (
-        <SubmitButton look="quiet" busyText="Sending">
+        <SubmitButton look="quiet" size="small" busyText="Sending">
           Send the link again
         </SubmitButton>
       )}
