@@ -23,7 +23,7 @@ export type SiteHeaderProps = {
 export function SiteHeader({ person, signOut }: SiteHeaderProps) {
   return (
     <header className="border-ink no-print border-b">
-      <div className="page flex min-h-16 items-center gap-x-4 gap-y-2 py-2 whitespace-nowrap lg:gap-x-8">
+      <div className="page flex min-h-16 flex-wrap items-center gap-x-4 gap-y-2 py-2 whitespace-nowrap lg:gap-x-8">
         <Link
           href={person ? "/sessions" : "/"}
           className="flex min-h-11 items-center gap-2 text-lg font-bold [font-stretch:125%]"

@@ -1,6 +1,7 @@
 "use client";
 
-import { useId, useState, useSyncExternalStore } from "react";
+import { useId, useState } from "react";
+import { useLive } from "@/components/ui/use-live";
 
 export type ThemeChoice = "system" | "light" | "dark";
 
@@ -20,8 +21,6 @@ export function applyTheme(choice: ThemeChoice): void {
   window.dispatchEvent(new Event("themechange"));
 }
 
-const never = () => () => undefined;
-
 /**
  * Light, dark, or as the system. It takes no server; before JavaScript runs it is not there, so that no control
  * does nothing, and its place is kept.
@@ -35,11 +34,7 @@ export function ThemeSwitch({
 }) {
   const name = useId();
   const [chosen, setChosen] = useState(initial);
-  const live = useSyncExternalStore(
-    never,
-    () => true,
-    () => false,
-  );
+  const live = useLive();
   return (
     <div className="min-h-9">
       {live && (
