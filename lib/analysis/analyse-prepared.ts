@@ -2,13 +2,17 @@ import { median, quantile } from "@/lib/numeric/quantile";
 import type { Fixes } from "@/lib/track/fixes";
 import type { PreparedTrack } from "@/lib/track/prepared-track";
 import type { SmoothedTrack } from "@/lib/track/smoothed-track";
-import { ANALYSIS_VERSION, type Analysis, type AnalysisOptions } from "./analysis";
+import { ANALYSIS_VERSION, type Analysis, type AnalysisOptions, type Discipline } from "./analysis";
 import { findBumps } from "./bumps";
-import { findOnFoil } from "./on-foil";
+import { courseColumns } from "./course";
+import { findOnFoil, type FoilSpan } from "./on-foil";
 import { segmentsOf } from "./segments";
 import { speedSeriesOf } from "./speed-series-of";
 import { summarise } from "./summarise";
+import { findTurns } from "./turns";
 import { cumulatedWayM, foilMask } from "./way";
+import { windFromBumps } from "./wind-from-bumps";
+import { windFromLegs } from "./wind-from-legs";
 
 /** A hole in the recording is a gap when it is longer than this (s) and than this many usual steps: metrics 2. */
 const GAP_S_MIN = 5;
@@ -29,6 +33,22 @@ function holeLimits(fixes: Fixes): HoleLimits {
   const gapLimitS = Math.max(GAP_S_MIN, GAP_STEPS_MIN * median(steps));
   const dropoutLimitS = Math.max(DROPOUT_S_MIN, quantile(steps, 0.97) + 0.6);
   return { gapLimitS, dropoutLimitS: Math.min(gapLimitS, dropoutLimitS) };
+}
+
+/** Wind by the rider's own courses, and for a wing the turns about it. */
+function turnsAndWind(
+  track: SmoothedTrack,
+  spans: readonly FoilSpan[],
+  onFoil: Uint8Array,
+  discipline: Discipline,
+): Pick<Analysis, "turns" | "windFromDeg"> {
+  if (discipline === "other" || spans.length === 0) return { turns: [], windFromDeg: null };
+  const columns = courseColumns(track);
+  if (discipline === "downwind")
+    return { turns: [], windFromDeg: windFromBumps(track, columns, spans, onFoil) };
+  const windFromDeg = windFromLegs(track, columns, spans, onFoil);
+  const turns = windFromDeg === null ? [] : findTurns(track, columns, spans, windFromDeg);
+  return { turns, windFromDeg };
 }
 
 /** The analysis of a track that is prepared already; see `analyse`. */
@@ -64,7 +84,6 @@ export function analysePrepared(prepared: PreparedTrack, options: AnalysisOption
     window: prepared.window,
     waterSessions: prepared.waterSessions,
     figures: summarise(analysed, prepared.window),
-    turns: [],
-    windFromDeg: null,
+    ...turnsAndWind(track, spans, onFoil, options.discipline),
   };
 }

@@ -117,7 +117,8 @@ export type Analysis = AnalysedTrack & {
   readonly window: Stretch;
   readonly waterSessions: readonly Stretch[];
   readonly figures: Figures;
-  /** Worked out from the next analysis version on; empty and null until then. */
+  /** Tacks and gybes of a wing session in order of time; empty for other disciplines. */
   readonly turns: readonly Turn[];
+  /** Where the wind came from by the rider's own courses (degrees true); null when they do not tell. */
   readonly windFromDeg: number | null;
 };

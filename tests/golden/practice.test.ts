@@ -102,6 +102,13 @@ describe.skipIf(!existsSync(made))("modelled sessions against their truth, by th
     expect(medians("glideRatioErrPct")[0]).toBeLessThanOrEqual(4.5);
   });
 
+  it("finds the turns, their kind and whether the foil was kept, and the wind", () => {
+    for (const atNoise of medians("turnF1")) expect(atNoise).toBeGreaterThanOrEqual(0.96);
+    for (const atNoise of medians("keptFoilAcc")) expect(atNoise).toBeGreaterThanOrEqual(0.96);
+    for (const atNoise of medians("turnTimeErrMedS")) expect(atNoise).toBeLessThanOrEqual(0.3);
+    for (const atNoise of medians("windDirErrDeg")) expect(atNoise).toBeLessThanOrEqual(5);
+  });
+
   it("states standard errors that cover the truth at least about as often as they claim", () => {
     const line = table.split("\n").find((one) => one.startsWith("stated SE, all together")) ?? "";
     const [, within1 = "", within2 = ""] = /within 1 SE (\d+) %, within 1.96 SE (\d+) %/.exec(line) ?? [];
