@@ -43,7 +43,7 @@ const SPEED_PRIOR_VARIANCE = 100;
  * passed over. What `visit` receives is overwritten by the next piece.
  *
  * @example
- * smoothInChunks({ path: { count: 0, timeS: new Float64Array(0), xM: new Float64Array(0), yM: new Float64Array(0) }, runs: [], velocity: null }, { agility: { sd: 1, timeS: 1 }, noiseScaleM: 1 }, () => 0); // undefined
+ * smoothInChunks({ path: { count: 0, timeS: new Float64Array(0), xM: new Float64Array(0), yM: new Float64Array(0) }, runs: [], velocity: null }, { agility: { sd: 1, timeS: 1 }, noiseScaleM: 1, roundingM2: 0 }, () => 0); // undefined
  */
 export function smoothInChunks(
   input: {
@@ -57,7 +57,7 @@ export function smoothInChunks(
   const smoother = new TwoAxisSmoother({
     capacity: CAPACITY,
     terms: rememberTerms(settingsTerms(settings)),
-    positionVariance: whiteVarianceM2(settings.noiseScaleM),
+    positionVariance: whiteVarianceM2(settings.noiseScaleM, settings.roundingM2),
   });
   const nodes = makeSmootherNodes(CAPACITY);
   const fixOf = new Int32Array(CAPACITY);

@@ -15,8 +15,9 @@ import { heartRateOnClock } from "./heart-rate-on-clock";
 import type { TimedPlane } from "./local-velocity";
 import { noiseScaleM } from "./noise-scale";
 import { type FirstPass, hasReceiverSpeed, receiverVelocity } from "./receiver-speed";
+import { roundingVarianceM2 } from "./rounding-variance";
 import { type FixRun, type MeasuredVelocity, smoothInChunks } from "./smooth-in-chunks";
-import { LOOSE, STIFF } from "./smoother-settings";
+import { type Agility, LOOSE, type SmootherSettings, STIFF } from "./smoother-settings";
 import type { SmoothedTrack } from "./smoothed-track";
 import { gateStationary } from "./stationary-gate";
 import { uniformClock } from "./uniform-clock";
@@ -42,6 +43,7 @@ type Work = {
   readonly path: TimedPlane;
   readonly runs: readonly FixRun[];
   readonly scale: number;
+  readonly roundingM2: number;
   readonly velocity: MeasuredVelocity | null;
 };
 
@@ -60,8 +62,9 @@ export function smoothTrack(fixes: Fixes, medianStepS: number): Smoothing {
     count: fixes.count,
     timeS: Float64Array.from(fixes.timeMs, (t) => (t - firstMs) / 1000),
   };
-  const scale = noiseScaleM(path, medianStepS);
-  const bare: Work = { fixes, path, runs: findRuns(path, medianStepS), scale, velocity: null };
+  const roundingM2 = roundingVarianceM2(fixes);
+  const scale = noiseScaleM(path, medianStepS, roundingM2);
+  const bare: Work = { fixes, path, runs: findRuns(path, medianStepS), scale, roundingM2, velocity: null };
   const receiver = measuredVelocity(bare);
   const work = { ...bare, velocity: receiver.velocity };
   const clock = uniformClock(firstMs, fixes.timeMs[fixes.count - 1] ?? NaN, medianStepS);
@@ -79,6 +82,10 @@ export function smoothTrack(fixes: Fixes, medianStepS: number): Smoothing {
     heartRateBpm: heartRateOnClock(fixes, clock),
   };
   return { smoothed, noiseScaleM: scale, receiverSpeed: receiver.state };
+}
+
+function settings(work: Work, agility: Agility): SmootherSettings {
+  return { agility, noiseScaleM: work.scale, roundingM2: work.roundingM2 };
 }
 
 function emptyColumns(count: number): FineColumns {
@@ -105,7 +112,7 @@ function measuredVelocity(work: Work): {
   const make = () => new Float64Array(work.path.count).fill(NaN);
   const first: FirstPass = { vxMps: make(), vyMps: make(), alongMps2: make(), seMps: make() };
   // A stiff course would hold the velocities to a line that cuts the corners of the way: 0.1 to 0.3 % short on waves.
-  smoothInChunks(work, { agility: LOOSE, noiseScaleM: work.scale }, (chunk) => {
+  smoothInChunks(work, settings(work, LOOSE), (chunk) => {
     const s = chunk.states;
     for (let i = 0; i < chunk.count; i++) {
       const fix = chunk.fixOf[i] as number;
@@ -138,7 +145,7 @@ function stiffPass(work: Work, columns: FineColumns, clock: PlaneClock): RunEnds
   const place = new PlaceNearFix(work.fixes, path);
   let next = 0;
   let run = 0;
-  smoothInChunks(work, { agility: STIFF, noiseScaleM: work.scale }, (chunk) => {
+  smoothInChunks(work, settings(work, STIFF), (chunk) => {
     const s = chunk.states;
     const lastNode = chunk.count - 1;
     while ((runs[run]?.to ?? Infinity) < (chunk.fixOf[lastNode] as number)) run++;
@@ -169,7 +176,7 @@ function stiffPass(work: Work, columns: FineColumns, clock: PlaneClock): RunEnds
 
 function loosePass(work: Work, columns: FineColumns, clock: PlaneClock): void {
   let next = 0;
-  smoothInChunks(work, { agility: LOOSE, noiseScaleM: work.scale }, (chunk) => {
+  smoothInChunks(work, settings(work, LOOSE), (chunk) => {
     next = eachSample(chunk, clock, next, (k, path, i, share) => {
       const v = Math.sqrt(path.vx * path.vx + path.vy * path.vy);
       const variance = Math.min(NOISE_TERM_VARIANCE_MAX, between(chunk.states.velocityVariance, i, share));
