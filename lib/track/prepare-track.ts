@@ -11,6 +11,10 @@ import type { Stretch } from "./speed-series";
 
 /** Level water shows no such range of height, however poor the receiver (common practice, no source). */
 const LAND_HEIGHT_M = 40;
+const RIDING_MPS = 2;
+/** At walking pace a wet barometer may lie, so more is asked. */
+const LAND_HEIGHT_M_SLOW = 150;
+const WALKING_MPS = 0.5;
 
 /**
  * From raw fixes to everything the analysis works on: cleaned, graded, smoothed onto a fine uniform clock, and told from the land. With `trim` the
@@ -22,9 +26,8 @@ export function prepareTrack(fixes: Fixes, options: PrepareOptions): PreparedTra
   const cleaned = cleanFixes(fixes);
   const smoothing = smoothTrack(cleaned.fixes, cleaned.medianStepS);
   const water = findOnWater(smoothing.smoothed, smoothing.noiseScaleM);
-  const rangeM = heightRangeM(cleaned.fixes, speedAt(smoothing.smoothed));
-  const land = rangeM > LAND_HEIGHT_M;
-  const waterSessions = trimSessions(land ? [] : water.sessions, options.trim, smoothing.smoothed);
+  const landM = landHeightM(cleaned.fixes, smoothing.smoothed);
+  const waterSessions = trimSessions(landM > 0 ? [] : water.sessions, options.trim, smoothing.smoothed);
   markOnWater(smoothing.smoothed, waterSessions);
   const quality = qualityReport(cleaned, smoothing, fixes.count);
   const firstFixMs = cleaned.fixes.timeMs[0] ?? NaN;
@@ -34,7 +37,7 @@ export function prepareTrack(fixes: Fixes, options: PrepareOptions): PreparedTra
     smoothed: smoothing.smoothed,
     window: windowOf(water.sessions, options.trim, smoothing.smoothed),
     waterSessions,
-    quality: { ...quality, notes: [...quality.notes, ...findings(smoothing, water, land ? rangeM : NaN)] },
+    quality: { ...quality, notes: [...quality.notes, ...findings(smoothing, water, landM)] },
     rawLengthM: rawLengthM(fixes),
     rawFixes: fixes.count,
     rawSegments: fixes.segmentStarts.length,
@@ -43,8 +46,14 @@ export function prepareTrack(fixes: Fixes, options: PrepareOptions): PreparedTra
   };
 }
 
-function speedAt(track: SmoothedTrack): (timeMs: number) => number {
-  return (timeMs) => track.speedMps[Math.round((timeMs - track.startMs) / track.stepMs)] ?? NaN;
+/** Range of height in metres that no open water has, or 0. */
+function landHeightM(fixes: Fixes, track: SmoothedTrack): number {
+  const speedAt = (timeMs: number) =>
+    track.speedMps[Math.round((timeMs - track.startMs) / track.stepMs)] ?? NaN;
+  const ridingM = heightRangeM(fixes, speedAt, RIDING_MPS);
+  if (ridingM > LAND_HEIGHT_M) return ridingM;
+  const walkingM = heightRangeM(fixes, speedAt, WALKING_MPS);
+  return walkingM > LAND_HEIGHT_M_SLOW ? walkingM : 0;
 }
 
 /** The detected times inside the rider's own ends, reaching to those ends; the whole stretch when none is inside. */
