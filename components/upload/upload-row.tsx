@@ -28,9 +28,14 @@ export function UploadRow({
     <li className="rule-hair py-3">
       <div className="flex items-baseline justify-between gap-4">
         <p className="min-w-0 font-semibold break-words">{name}</p>
-        <p className={classNames("num shrink-0 text-sm", isProblem && "text-buoy-text")}>
-          {statusWord(item)}
-        </p>
+        <div className="flex shrink-0 items-baseline gap-4">
+          <p className={classNames("num text-sm", isProblem && "text-buoy-text")}>{statusWord(item)}</p>
+          {(state.step === "waiting" || state.step === "sending") && (
+            <Button look="quiet" size="small" onClick={() => actions.stop(key)}>
+              Stop <span className="sr-only">sending {name}</span>
+            </Button>
+          )}
+        </div>
       </div>
       {state.step === "sending" && (
         <Progress label={`Sending ${name}`} share={state.share} className="mt-2" />

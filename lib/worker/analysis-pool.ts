@@ -1,10 +1,12 @@
 import { setTimeout as later } from "node:timers";
 import { MessageChannel } from "node:worker_threads";
 import { Piscina } from "piscina";
-import { AppError } from "@/lib/errors/app-error";
 import type { ParseErrorCode } from "@/lib/errors/parse-error";
 import { refusal } from "@/lib/formats/refusal";
 import type { AnalysisProgress, AnalysisTask, TrackOutcome, WorkerMessage } from "./analysis-task";
+
+/** A code and no class: the pool outlives the copy of the module that made it, and classes of two copies differ. */
+export const POOL_BUSY = "ERR_ANALYSIS_POOL_BUSY";
 
 export type AnalysisPoolOptions = {
   /** The bundle that scripts/build-worker.mjs makes. */
@@ -20,7 +22,7 @@ export type AnalysisPool = {
    * Reads and analyses one file in a worker thread. A file that takes too long or needs too much memory is a refusal with its
    * sentence like any other: its worker is ended, a fresh one takes its place, this process goes on.
    *
-   * @throws AppError `limit_exceeded` when too many files wait already; whatever the code itself throws.
+   * @throws Error with code POOL_BUSY when too many files wait already; whatever the code itself throws.
    */
   readonly run: (
     task: AnalysisTask,
@@ -47,10 +49,7 @@ export function createAnalysisPool(options: AnalysisPoolOptions): AnalysisPool {
   let open = 0;
   const run: AnalysisPool["run"] = async (task, onProgress) => {
     if (open >= limits.threads + limits.queueMax) {
-      throw new AppError(
-        "limit_exceeded",
-        "Many files are being read just now. This one is safe; read it in a minute.",
-      );
+      throw Object.assign(new Error("too many files wait to be read"), { code: POOL_BUSY });
     }
     open += 1;
     try {

@@ -5,7 +5,7 @@ import { zipSync } from "fflate";
 import { afterAll, beforeAll, describe, expect, test } from "vitest";
 import { at } from "@/lib/errors/invariant";
 import type { AnalysisProgress, AnalysisTask } from "@/lib/worker/analysis-task";
-import { createAnalysisPool, type AnalysisPool } from "@/lib/worker/analysis-pool";
+import { createAnalysisPool, POOL_BUSY, type AnalysisPool } from "@/lib/worker/analysis-pool";
 import { bundledWorker } from "@/tests/support/analysis-worker";
 import { madeGpx } from "@/tests/support/made-gpx";
 import { openTestDatabase } from "@/tests/support/test-database";
@@ -184,7 +184,7 @@ describe("the worker pool", () => {
     const results = await Promise.allSettled(["a", "b", "c", "d"].map((name) => small.run(taskOf(name))));
     const refused = results.filter(({ status }) => status === "rejected");
     expect(refused.length).toBeGreaterThan(0);
-    for (const one of refused) expect(one).toMatchObject({ reason: { code: "limit_exceeded" } });
+    for (const one of refused) expect(one).toMatchObject({ reason: { code: POOL_BUSY } });
     await expect(small.run(taskOf("bug"))).rejects.toThrow("a bug of ours");
     await small.close();
   });

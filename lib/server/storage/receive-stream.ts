@@ -10,6 +10,7 @@ export function megabytes(bytes: number): string {
   return `${Math.round(bytes / 1_000_000)} MB`;
 }
 
+/** The refusal of a file that is larger than one may be. */
 export function tooLarge(bytesMax: number): UploadRefusedError {
   return new UploadRefusedError(
     413,
@@ -111,6 +112,7 @@ export function diskError(error: unknown): unknown {
   return storageFull(error);
 }
 
+/** The refusal while the disk has no room to spare. */
 export function storageFull(cause?: unknown): UploadRefusedError {
   return new UploadRefusedError(
     507,

@@ -2,17 +2,15 @@ import { env } from "@/lib/server/env/env";
 import { diskStorage } from "./disk-storage";
 import type { FileStorage } from "./file-storage";
 
-const holder = globalThis as typeof globalThis & { trimwakeStorage?: FileStorage };
+let current: FileStorage | undefined;
 
-/** The one store of raw files of this process. */
+/** The store of raw files. It holds no state of its own, so any number of copies of this module may have one. */
 export function storage(): FileStorage {
-  holder.trimwakeStorage ??= diskStorage(env().dataDir);
-  return holder.trimwakeStorage;
+  current ??= diskStorage(env().dataDir);
+  return current;
 }
 
-/** Puts another store in its place (tests). Gives back the one before. */
-export function replaceStorage(next: FileStorage | undefined): FileStorage | undefined {
-  const before = holder.trimwakeStorage;
-  holder.trimwakeStorage = next;
-  return before;
+/** Puts another store in its place (tests); undefined goes back to the usual one. */
+export function replaceStorage(next: FileStorage | undefined): void {
+  current = next;
 }
