@@ -1,6 +1,6 @@
 "use client";
 
-import { useId, useState } from "react";
+import { useId, useSyncExternalStore } from "react";
 import { useLive } from "@/components/ui/use-live";
 
 export type ThemeChoice = "system" | "light" | "dark";
@@ -21,6 +21,12 @@ export function applyTheme(choice: ThemeChoice): void {
   window.dispatchEvent(new Event("themechange"));
 }
 
+/** Two switches on one page (the footer's and the one in the settings) show one choice. */
+function whenThemeChanges(changed: () => void): () => void {
+  window.addEventListener("themechange", changed);
+  return () => window.removeEventListener("themechange", changed);
+}
+
 /**
  * Light, dark, or as the system. It takes no server; before JavaScript runs it is not there, so that no control
  * does nothing, and its place is kept.
@@ -33,7 +39,11 @@ export function ThemeSwitch({
   onChosen?: (choice: ThemeChoice) => void;
 }) {
   const name = useId();
-  const [chosen, setChosen] = useState(initial);
+  const chosen = useSyncExternalStore(
+    whenThemeChanges,
+    () => document.documentElement.dataset.theme ?? initial,
+    () => initial,
+  );
   const live = useLive();
   return (
     <div className="min-h-9">
@@ -53,7 +63,6 @@ export function ThemeSwitch({
                   value={choice.value}
                   checked={chosen === choice.value}
                   onChange={() => {
-                    setChosen(choice.value);
                     applyTheme(choice.value);
                     onChosen?.(choice.value);
                   }}

@@ -61,8 +61,9 @@ function startTasks(): void {
 }
 
 /**
- * Next answers SIGTERM and SIGINT itself: it lets the requests under way finish and exits. Closing the file in
- * the last moment folds the write-ahead log back into it.
+ * Next answers SIGTERM and SIGINT itself: it lets the requests under way finish and exits. What is left to do is to
+ * stop the tasks and close the file. Committed rows may stand in its write-ahead log; the next start reads them
+ * there, after a kill as well.
  */
 function closeAtTheEnd(): void {
   process.once("exit", () => {
