@@ -131,7 +131,7 @@ const bestOverDistance = (key: string, name: string, limits: string): FigureDefi
 });
 
 const SHORT =
-  "The fastest of many noisy windows tends to be too fast: where the expected excess is larger than the standard error it is taken off. Never across a dropout.";
+  "The fastest of many noisy windows tends to be too fast: 70 % of the expected excess is taken off. Never across a dropout.";
 const LONG = "Never across a gap in the recording, never off the water.";
 
 const BESTS: readonly FigureDefinition[] = [

@@ -68,3 +68,19 @@ describe("coast-downs without push", () => {
     expect(Math.abs((analysis.figures.glide?.ratio ?? 0) / truth.glideRatio - 1)).toBeLessThan(0.05);
   });
 });
+
+describe("lengths of sample recordings", () => {
+  // Lengths: GeographicLib's GeodSolve 2.1.2, PROJ geod 9.1.1 and Vincenty agree to the millimetre; see
+  // fixtures/checks/gpx_samples.csv (column length_m_geodsolve) for the files and the way.
+  it.each([
+    ["run.gpx", 206, 3100.563],
+    ["31_08_2019.gpx", 562, 17033.884],
+    ["Geotag.gpx", 9, 260.634],
+  ])("%s: %i fixes and the geodesic length within 0.1 m per km", async (name, fixes, lengthM) => {
+    const [outcome] = await analyseFile(path.resolve(folder, "../gpx", name), {});
+    if (outcome?.kind !== "analysed") throw new Error(`${name} was refused`);
+    expect(outcome.analysis.rawFixes).toBe(fixes);
+    expect(Math.abs(outcome.analysis.rawLengthM - lengthM)).toBeLessThan(1e-4 * lengthM);
+    expect(outcome.analysis.segments).toEqual([]);
+  });
+});
