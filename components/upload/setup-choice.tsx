@@ -27,7 +27,12 @@ export function SetupChoice({
 }) {
   const chosen = setups.find(({ id }) => id === chosenId);
   return (
-    <Section id="ridden-on" title="Ridden on" reading="Goes on every session you upload here.">
+    <Section
+      id="ridden-on"
+      title="Ridden on"
+      reading="Goes on every session you upload here."
+      className="lg:mt-0"
+    >
       {setups.length === 0 ? (
         <p className="text-muted">
           You have no setup yet.{" "}

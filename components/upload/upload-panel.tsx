@@ -66,45 +66,50 @@ export function UploadPanel(props: UploadPanelProps) {
   };
 
   return (
-    <form action={sendPlain}>
-      <DropArea onFiles={takeFiles}>
-        <FileChoice onFiles={takeFiles} />
-        <p id="upload-limits" className="text-muted mt-2 text-sm">
-          up to {limits.filesMax}, {Math.round(limits.bytesMax / 1_000_000)} MB each
-          <span className="hidden sm:inline">; or drop them anywhere on this page</span>
+    <form
+      action={sendPlain}
+      className="lg:grid lg:grid-cols-[minmax(0,1fr)_20rem] lg:grid-rows-[auto_1fr] lg:gap-x-12"
+    >
+      <div className="lg:row-span-2">
+        <DropArea onFiles={takeFiles}>
+          <FileChoice onFiles={takeFiles} />
+          <p id="upload-limits" className="text-muted mt-2 text-sm">
+            up to {limits.filesMax}, {Math.round(limits.bytesMax / 1_000_000)} MB each
+            <span className="hidden sm:inline">; or drop them anywhere on this page</span>
+          </p>
+          <noscript>
+            <div className="mt-3">
+              <SubmitButton busyText="Sending">Send and read</SubmitButton>
+              <p className="text-muted mt-1 text-sm">Without JavaScript: up to 2 MB in all.</p>
+            </div>
+          </noscript>
+        </DropArea>
+        {problem !== "" && (
+          <Notice kind="problem" className="mt-4">
+            {problem}
+          </Notice>
+        )}
+        <p role="status" className="sr-only">
+          {announcement(items)}
         </p>
-        <noscript>
-          <div className="mt-3">
-            <SubmitButton busyText="Sending">Send and read</SubmitButton>
-            <p className="text-muted mt-1 text-sm">Without JavaScript: up to 2 MB in all.</p>
-          </div>
-        </noscript>
-      </DropArea>
-      {problem !== "" && (
-        <Notice kind="problem" className="mt-4">
-          {problem}
-        </Notice>
-      )}
-      <p role="status" className="sr-only">
-        {announcement(items)}
-      </p>
-      <PlainResults upload={plain} unit={unit} />
-      {items.length > 0 && (
-        <ul aria-label="Files" className="rule-ink mt-6">
-          {items.map((item) => (
-            <UploadRow
-              key={item.key}
-              item={item}
-              unit={unit}
-              actions={{
-                stop: (key) => queue.stop(key),
-                retry: (key) => queue.retry(key),
-                restore: (key, sessionId) => void restore(key, sessionId),
-              }}
-            />
-          ))}
-        </ul>
-      )}
+        <PlainResults upload={plain} unit={unit} />
+        {items.length > 0 && (
+          <ul aria-label="Files" className="rule-ink mt-6">
+            {items.map((item) => (
+              <UploadRow
+                key={item.key}
+                item={item}
+                unit={unit}
+                actions={{
+                  stop: (key) => queue.stop(key),
+                  retry: (key) => queue.retry(key),
+                  restore: (key, sessionId) => void restore(key, sessionId),
+                }}
+              />
+            ))}
+          </ul>
+        )}
+      </div>
       <SetupChoice
         setups={setups}
         lastUsedId={lastUsedId}
@@ -127,7 +132,7 @@ function tooMany(left: number, filesMax: number): string {
 function GoOn({ sessionIds }: { sessionIds: readonly string[] }) {
   const [only] = sessionIds;
   return (
-    <div className="bg-paper rule-ink sticky bottom-0 z-10 -mx-4 mt-8 px-4 py-3 sm:static sm:mx-0 sm:border-0 sm:px-0">
+    <div className="bg-paper rule-ink sticky bottom-0 z-10 -mx-4 mt-8 px-4 py-3 sm:static sm:mx-0 sm:border-0 sm:px-0 lg:mt-2 lg:self-start">
       {sessionIds.length === 1 && only !== undefined ? (
         <LinkButton look="main" className="w-full sm:w-auto" href={`/sessions/${only}`}>
           Look at the session
