@@ -74,6 +74,9 @@ function edgeOf(track: SmoothedTrack, index: number, outwards: 1 | -1, stallMps:
     const b = index + outwards * toS * perS;
     return meanSpeed(track, Math.min(a, b), Math.max(a, b));
   };
+  // Where the rider's own ends or a hole cut the flight, nothing was seen of its edge.
+  const beyond = Math.round(index + outwards * perS);
+  if (track.onWater[beyond] !== 1 || (track.gapS[beyond] ?? 0) > HIDDEN_S) return "unseen";
   const outside = window(3, 8);
   const inside = window(-6, -1);
   if (Number.isNaN(outside) || Number.isNaN(inside)) return "unseen";
@@ -165,7 +168,7 @@ export type Heights = { readonly timeMs: Float64Array; readonly elevationM: Floa
  * touchdowns or more: else (a yacht, a kayak, a ferry) nothing is kept, unless no edge was recorded at all and the
  * speed is as lively as bumps make it. Nothing is kept when the heights climb and fall (a hill) or when most of the time
  * lies in holes of the recording. A single span is left out when it begins and ends slowly and runs as steadily as a
- * boat under way (the tow home), when it is faster than any foil, or when half of it was not recorded.
+ * boat under way (the tow home; one cut at both ends is trusted with the rest of the session), when it is faster than any foil, or when half of it was not recorded.
  * In: the track, spans by sample index, the session's stall speed (m/s), recorded heights or null. Out: a part of
  * the spans, in order.
  */
@@ -185,10 +188,10 @@ export function keepFoiling(
   const edges = judged.flatMap((one) => [one.takeoff, one.touchdown]).filter((edge) => edge !== "unseen");
   const quick = edges.filter((edge) => edge === "quick").length;
   if (edges.length > 0 && quick < QUICK_SHARE_MIN * edges.length) return [];
-  return judged
-    .filter(
-      ({ span, takeoff, touchdown }) =>
-        takeoff === "quick" || touchdown === "quick" || liveliness(track, span) >= LIVELY_MPS,
-    )
-    .map(({ span }) => span);
+  const isShown = (one: (typeof judged)[number]): boolean => {
+    if (one.takeoff === "quick" || one.touchdown === "quick") return true;
+    const unseen = one.takeoff === "unseen" && one.touchdown === "unseen";
+    return (unseen && edges.length > 0) || liveliness(track, one.span) >= LIVELY_MPS;
+  };
+  return judged.filter(isShown).map(({ span }) => span);
 }

@@ -88,6 +88,26 @@ describe("findOnFoil", () => {
     expect(spans[0]?.end).toBeLessThan(250 * 4);
   });
 
+  it("cuts a segment at the rider's own ends, to the sample", () => {
+    const track = smoothedTrackFromSpeed(flights([[60, 400]]), 460, {
+      isOnWater: (t) => t >= 100 && t <= 300,
+    });
+    const { spans } = findOnFoil(track, options);
+    expect(spans).toHaveLength(1);
+    expect(spans[0]?.start).toBeGreaterThanOrEqual(100 * 4);
+    expect(spans[0]?.end).toBeLessThanOrEqual(300 * 4);
+    expect((spans[0]?.end ?? 0) - (spans[0]?.start ?? 0)).toBeGreaterThan(198 * 4);
+  });
+
+  it("flies on through a hole of eight seconds at flying speed, and not through one of twenty", () => {
+    const made = (holeS: number) =>
+      smoothedTrackFromSpeed(flights([[60, 300]]), 360, {
+        gapS: (t) => (t > 150 && t < 150 + holeS ? holeS : 0),
+      });
+    expect(findOnFoil(made(8), options).spans).toHaveLength(1);
+    expect(findOnFoil(made(20), options).spans).toHaveLength(2);
+  });
+
   it("flies slower when the setup's minimum flying speed is known to be low", () => {
     const slow = flights([[60, 200]], 4.3);
     const known = findOnFoil(smoothedTrackFromSpeed(slow, 260), { ...options, minimumFlyingSpeedMps: 2.6 });

@@ -1,7 +1,7 @@
 import type { SmoothedTrack } from "@/lib/track/smoothed-track";
 import type { AnalysisOptions } from "./analysis";
 import { keepFoiling, type Heights } from "./foil-signature";
-import { placeEdges } from "./foil-edges";
+import { placeEdges, type FoilEdges } from "./foil-edges";
 import { firstStallSpeed, stallSpeedFrom, THRESHOLD_OVER_STALL } from "./flying-speed";
 import { median } from "@/lib/numeric/quantile";
 import { runs as runsOf, type Run } from "@/lib/numeric/runs";
@@ -24,6 +24,9 @@ const SWITCH_PENALTY = 5;
 const SPEED_WIDTH_MPS = 0.45;
 const ODDS_PER_S = 1.2;
 
+/** A hole in the recording longer than this (s) ends a segment; over a shorter one the net speed speaks. */
+const HOLE_S_MAX = 15;
+
 function evidence(track: SmoothedTrack, thresholdMps: number): Float32Array {
   const weight = (ODDS_PER_S * track.stepMs) / 1000;
   const odds = new Float32Array(track.count);
@@ -31,7 +34,8 @@ function evidence(track: SmoothedTrack, thresholdMps: number): Float32Array {
     const over = ((track.speedMps[i] ?? 0) - thresholdMps) / SPEED_WIDTH_MPS;
     let trust = (track.gapS[i] ?? 0) > 4 ? 0.3 : 1;
     if ((track.speedSeMps[i] ?? 0) > 1.5) trust *= 0.2;
-    odds[i] = track.onWater[i] === 1 ? Math.max(-4, Math.min(3, over)) * weight * trust : -20 * weight;
+    const possible = track.onWater[i] === 1 && (track.gapS[i] ?? 0) <= HOLE_S_MAX;
+    odds[i] = possible ? Math.max(-4, Math.min(3, over)) * weight * trust : -20 * weight;
   }
   return odds;
 }
@@ -76,6 +80,16 @@ function adaptedPath(track: SmoothedTrack, options: AnalysisOptions): Path {
   }
 }
 
+/** The edges drawn in to the time on the water around the run, where the rider's own ends or a landing cut it. */
+function onWaterPart(track: SmoothedTrack, run: Run, edges: FoilEdges): FoilEdges {
+  let first = run.from;
+  while (first > edges.start && first > 0 && track.onWater[first - 1] === 1) first--;
+  let last = run.to;
+  while (last < edges.end && last < track.count - 1 && track.onWater[last + 1] === 1) last++;
+  const start = Math.max(edges.start, first);
+  return { start, end: Math.max(start, Math.min(edges.end, last)) };
+}
+
 function meanConfidence(oddsOn: Float64Array, run: Run): number {
   let sum = 0;
   for (let i = run.from; i <= run.to; i++) sum += Math.tanh(Math.max(0, oddsOn[i] ?? 0) / 2);
@@ -104,7 +118,7 @@ function joinShortBreaks(spans: readonly FoilSpan[], track: SmoothedTrack): Foil
  * that follows the session's own slow riding (2.8-4.6 m/s, or the setup's minimum flying speed), with edges
  * placed afterwards by what the speed does there.
  *
- * Only time on the water counts. At least 3 s on; breaks under 2 s do not end a segment. A track without the
+ * Only time on the water counts, and a hole in the recording over 15 s ends a segment. At least 3 s on; breaks under 2 s do not end a segment. A track without the
  * signature of foiling (see `keepFoiling`, which may look at the recorded heights) has none, however fast it is.
  * Out: spans in order, not overlapping, as fractional sample indices; confidence 0 to 1 is the mean of
  * tanh(margin / 2) over the span, the margin being the log-odds of the path.
@@ -117,7 +131,7 @@ export function findOnFoil(
   if (track.count < 2) return { spans: [], stallMps: firstStallSpeed(options.minimumFlyingSpeedMps) };
   const { oddsOn, runs, stallMps } = adaptedPath(track, options);
   const placed = runs.map((run) => ({
-    ...placeEdges(track, run, { stallMps, discipline: options.discipline }),
+    ...onWaterPart(track, run, placeEdges(track, run, { stallMps, discipline: options.discipline })),
     confidence: meanConfidence(oddsOn, run),
   }));
   const spans = joinShortBreaks(placed, track).filter(
