@@ -17,20 +17,8 @@ const pureLib = [
   "lib/race",
   "lib/display",
 ];
-const turf = ["@turf/turf"];
 const react = ["react", "react-dom", "next/link", "next/navigation", "next/dynamic", "next/image"];
-const ui = [
-  ...react,
-  "radix-ui",
-  "lucide-react",
-  "sonner",
-  "get-nonce",
-  "react-hook-form",
-  "@hookform/resolvers",
-  "@tanstack/react-query",
-  "@tanstack/react-table",
-  "zod",
-];
+const ui = [...react, "lucide-react", "sonner", "@tanstack/react-query", "zod"];
 
 /** @type {{ room: string, ours: string[], npm: string[] }[]} */
 export const zones = [
@@ -38,7 +26,7 @@ export const zones = [
   { room: "lib/errors", ours: [], npm: [] },
   { room: "lib/numeric", ours: floor, npm: [] },
   { room: "lib/stats", ours: [...floor, "lib/numeric"], npm: [] },
-  { room: "lib/geo", ours: [...floor, "lib/numeric", "lib/stats"], npm: ["geographiclib-geodesic", ...turf] },
+  { room: "lib/geo", ours: [...floor, "lib/numeric", "lib/stats"], npm: ["geographiclib-geodesic"] },
   { room: "lib/track", ours: track, npm: ["fflate", "@photostructure/tz-lookup"] },
   {
     room: "lib/formats",
@@ -67,7 +55,7 @@ export const zones = [
   {
     room: "db",
     ours: [...floor, "lib/track", "lib/analysis", "db"],
-    npm: ["drizzle-orm", "@libsql/client", "uuidv7", "node:*", "server-only"],
+    npm: ["drizzle-orm", "@libsql/client", "uuidv7", "node:*"],
   },
   { room: "components/ui", ours: ["components/ui", "lib/display", ...floor], npm: ui },
   {
@@ -78,14 +66,14 @@ export const zones = [
   {
     room: "components/map",
     ours: ["components/ui", "components/map", ...pureLib],
-    npm: [...ui, "maplibre-gl", "react-map-gl", "pmtiles", ...turf],
+    npm: [...ui, "maplibre-gl", "react-map-gl", "pmtiles"],
   },
   { room: "components/drawing", ours: ["components/ui", "components/drawing", ...pureLib], npm: ui },
   { room: "components", ours: ["components", ...pureLib], npm: ui },
   {
     room: "app",
     ours: ["app", "components", "lib/server", ...pureLib],
-    npm: [...ui, "next", "next/*", "server-only"],
+    npm: [...ui, "next", "next/*"],
   },
 ];
 

@@ -8,7 +8,6 @@ const shared = {
   resolve: {
     alias: {
       "@": path.resolve(import.meta.dirname),
-      "server-only": path.resolve(import.meta.dirname, "tests/support/server-only.ts"),
     },
   },
 };

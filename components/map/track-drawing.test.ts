@@ -1,3 +1,4 @@
+import { lineString, simplify } from "@turf/turf";
 import { describe, expect, it } from "vitest";
 import { SPEED_BANDS } from "@/lib/display/speed-ramp";
 import { FLAG_GAP, FLAG_ON_FOIL, FLAG_ON_WATER, type SpeedSeries } from "@/lib/track/speed-series";
@@ -153,6 +154,20 @@ describe("trackRuns", () => {
         expect(Math.abs(px * dy - py * dx) / Math.hypot(dx, dy)).toBeLessThanOrEqual(2 + 1e-9);
       }
     }
+  });
+
+  it("keeps the same samples as turf's simplify", () => {
+    const wavy = seriesOf(
+      Array.from({ length: 700 }, (_, i) => ({
+        lat: (40 * Math.sin(i / 11) + (i % 5)) / DEGREE_M,
+        lon: (6 * i) / DEGREE_M,
+      })),
+    );
+    const shape = trackShape(wavy);
+    const [run] = trackRuns(shape, { scale, toleranceM: 2 });
+    const points = Array.from(shape.eastM, (east, i) => [east, shape.northM[i] ?? Number.NaN, i]);
+    const oracle = simplify(lineString(points), { tolerance: 2, highQuality: true });
+    expect(run?.samples).toEqual(oracle.geometry.coordinates.map((point) => point[2]));
   });
 
   it("draws only the stretch asked for", () => {
