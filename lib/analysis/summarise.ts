@@ -29,8 +29,11 @@ function clip(part: Stretch, stretch: Stretch): Stretch | null {
   return endMs > startMs ? { startMs, endMs } : null;
 }
 
+/** Packed times are rounded to thousandths of a millisecond: what ends with the stretch must stay inside it. */
+const ROUNDING_MS = 0.01;
+
 const isInside = (part: Stretch, stretch: Stretch): boolean =>
-  part.startMs >= stretch.startMs && part.endMs <= stretch.endMs;
+  part.startMs >= stretch.startMs - ROUNDING_MS && part.endMs <= stretch.endMs + ROUNDING_MS;
 
 function movingS(series: SpeedSeries, stretch: Stretch): number {
   const { startMs, stepMs } = series;
@@ -55,11 +58,11 @@ function foilFigures(series: SpeedSeries, segments: readonly OnFoilSegment[], st
   for (const segment of segments) {
     const part = clip(segment, stretch);
     if (!part) continue;
-    const whole = timeS(part) === timeS(segment);
+    const whole = Math.abs(timeS(part) - timeS(segment)) * 1000 <= 2 * ROUNDING_MS;
     lengths.push(whole ? segment.distanceM : wayAt(series, part.endMs) - wayAt(series, part.startMs));
     times.push(timeS(part));
   }
-  const isIn = (timeMs: number): boolean => timeMs >= stretch.startMs && timeMs <= stretch.endMs;
+  const isIn = (timeMs: number): boolean => isInside({ startMs: timeMs, endMs: timeMs }, stretch);
   return {
     onFoilDistanceM: lengths.reduce((sum, length) => sum + length, 0),
     onFoilTimeS: times.reduce((sum, time) => sum + time, 0),

@@ -1,6 +1,11 @@
 import { readFileSync } from "node:fs";
 import path from "node:path";
 import { describe, expect, it } from "vitest";
+import { BEST_DISTANCE_KEYS, BEST_TIME_KEYS } from "@/lib/analysis/analysis";
+import { summarise } from "@/lib/analysis/summarise";
+import { decodeTrackPayload, encodeTrackPayload } from "@/lib/analysis/track-payload";
+import { gzipBytes } from "@/lib/track/gzip-bytes";
+import { encodeSeries } from "@/lib/track/series-blob";
 import { analyseFile } from "@/scripts/support/analyse-file";
 
 /**
@@ -83,4 +88,30 @@ describe("lengths of sample recordings", () => {
     expect(Math.abs(outcome.analysis.rawLengthM - lengthM)).toBeLessThan(1e-4 * lengthM);
     expect(outcome.analysis.segments).toEqual([]);
   });
+});
+
+describe("figures in the page and in the stored row", () => {
+  it.each(["coast-downs", "downwind", "wing"])(
+    "agree for the whole of %s after packing and unpacking",
+    async (name) => {
+      const { analysis } = await session(name);
+      const page = decodeTrackPayload(
+        encodeTrackPayload({ ...analysis, series: gzipBytes(encodeSeries(analysis.series)) }),
+      );
+      const again = summarise(page, page.window);
+      const stored = analysis.figures;
+      expect(again.takeoffs).toBe(stored.takeoffs);
+      expect(again.bumps?.rides).toBe(stored.bumps?.rides);
+      expect(again.glide?.lulls).toBe(stored.glide?.lulls);
+      // The way is packed to a millimetre a sample, speeds to a millimetre a second.
+      expect(again.waterDistanceM).toBeCloseTo(stored.waterDistanceM, 2);
+      expect(again.onFoilDistanceM).toBeCloseTo(stored.onFoilDistanceM, 1);
+      for (const key of [...BEST_TIME_KEYS, ...BEST_DISTANCE_KEYS]) {
+        const kept = speedOf(stored.bests[key]);
+        if (Number.isNaN(kept)) expect(again.bests[key]).toEqual(stored.bests[key]);
+        else expect(speedOf(again.bests[key])).toBeCloseTo(kept, 2);
+      }
+      expect(again.glide?.ratio).toBeCloseTo(stored.glide?.ratio ?? NaN, 1);
+    },
+  );
 });
