@@ -1,6 +1,7 @@
 "use client";
 
-import { useEffect, useRef, useState, type PointerEvent } from "react";
+import { useEffect, useLayoutEffect, useRef, useState, type PointerEvent } from "react";
+import { flushSync } from "react-dom";
 import { useTheme } from "@/components/ui/use-theme";
 import { themeTokens, type Theme, type ThemeTokens } from "@/lib/display/theme-tokens";
 import type { TimeCursor } from "@/lib/display/time-cursor";
@@ -45,6 +46,24 @@ function prepare(
   return context;
 }
 
+/** The theme to draw in: the page's own, and the light one while it is being printed. */
+export function useDrawnTheme(): Theme {
+  const theme = useTheme();
+  const [isPrinting, setPrinting] = useState(false);
+  useEffect(() => {
+    // The browser takes its picture of the page as soon as the event returns: no later render counts.
+    const before = () => flushSync(() => setPrinting(true));
+    const after = () => setPrinting(false);
+    window.addEventListener("beforeprint", before);
+    window.addEventListener("afterprint", after);
+    return () => {
+      window.removeEventListener("beforeprint", before);
+      window.removeEventListener("afterprint", after);
+    };
+  }, []);
+  return isPrinting ? "light" : theme;
+}
+
 /**
  * Two canvases over each other: the lower is drawn once, the upper follows the cursor without rendering the page,
  * so that a long session scrubs smoothly. Vertical swipes stay with the page.
@@ -55,7 +74,7 @@ export function LayeredCanvas(props: LayeredCanvasProps) {
   const still = useRef<HTMLCanvasElement>(null);
   const moving = useRef<HTMLCanvasElement>(null);
   const [width, setWidth] = useState(0);
-  const theme = useTheme();
+  const theme = useDrawnTheme();
 
   useEffect(() => {
     const element = box.current;
@@ -69,7 +88,7 @@ export function LayeredCanvas(props: LayeredCanvasProps) {
     return () => observer.disconnect();
   }, [onWidth]);
 
-  useEffect(() => {
+  useLayoutEffect(() => {
     const context = prepare(still.current, width, height);
     if (context !== null) drawStill({ context, width, height, tokens: themeTokens(theme), theme });
   }, [drawStill, width, height, theme]);

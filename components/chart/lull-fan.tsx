@@ -63,7 +63,7 @@ export function LullFan(props: { series: SpeedSeries; lulls: readonly Lull[]; gl
       viewBox={`0 0 ${WIDTH} ${HEIGHT}`}
       role="img"
       aria-labelledby={titleId}
-      className="bg-sheet rule-ink h-auto w-full"
+      className="bg-sheet rule-ink h-auto w-full max-w-4xl"
     >
       <title id={titleId}>{`Lull fan. ${words}`}</title>
       {niceTicks(0, mostHeightM, 4).map((tick) => (

@@ -1,16 +1,15 @@
 "use client";
 
-import { useCallback, useEffect, useMemo, useRef, useState, type PointerEvent } from "react";
+import { useCallback, useEffect, useLayoutEffect, useMemo, useRef, useState, type PointerEvent } from "react";
 import uPlot from "uplot";
 import "uplot/dist/uPlot.min.css";
-import { useTheme } from "@/components/ui/use-theme";
 import { themeTokens } from "@/lib/display/theme-tokens";
 import { formatTime } from "@/lib/display/format-time";
 import { speedWithUnit } from "@/lib/display/format-speed";
 import type { TimeCursor } from "@/lib/display/time-cursor";
 import type { Stretch } from "@/lib/track/speed-series";
 import type { SpeedUnit } from "@/lib/units/speed";
-import { LayeredCanvas, type Surface } from "./layered-canvas";
+import { LayeredCanvas, useDrawnTheme, type Surface } from "./layered-canvas";
 import { PLOT_LEFT, PLOT_RIGHT, showStretch, speedColumns, speedPlotOptions } from "./speed-plot";
 import { brushedStretch, pxOfTime, timeAtPx, type TimeAxis } from "./time-axis";
 import { drawStrips, stripsHeight, type Strips } from "./timeline-strips";
@@ -45,14 +44,14 @@ function SpeedPlot({
 }: Pick<TimelineProps, "strips" | "view" | "speedUnit" | "timeZone"> & { width: number }) {
   const host = useRef<HTMLDivElement>(null);
   const plot = useRef<uPlot | null>(null);
-  const theme = useTheme();
+  const theme = useDrawnTheme();
   const columns = useMemo(() => speedColumns(strips.series, speedUnit), [strips.series, speedUnit]);
   const shown = useRef(view);
   useEffect(() => {
     shown.current = view;
     if (plot.current !== null) showStretch(plot.current, view);
   }, [view]);
-  useEffect(() => {
+  useLayoutEffect(() => {
     if (host.current === null || width === 0) return;
     const tokens = themeTokens(theme);
     const made = new uPlot(

@@ -1,9 +1,10 @@
 "use client";
 
-import { useCallback, useMemo, useRef, type PointerEvent } from "react";
+import { useCallback, useMemo, useRef, useState, type PointerEvent } from "react";
 import { speedBand, speedRamp, type SpeedScale } from "@/lib/display/speed-ramp";
 import { niceTicks } from "@/lib/display/ticks";
 import type { TimeCursor } from "@/lib/display/time-cursor";
+import { bearingInWords } from "@/lib/display/format-bearing";
 import { formatNumber } from "@/lib/display/format-number";
 import { unrolledRun, type UnrolledRun as Run } from "@/lib/geo/unrolled-run";
 import {
@@ -48,7 +49,7 @@ function placeOf(run: Run, width: number, height: number): Place {
   const high = height - PAD.top - PAD.bottom;
   const perM = wide / Math.max(1, run.alongMaxM - run.alongMinM);
   const room = high / Math.max(1, run.asideMaxM - run.asideMinM) / perM;
-  const stretched = room >= 2 ? Math.min(10, Math.floor(room)) : Math.max(0.1, Math.min(1, room));
+  const stretched = room >= 1 ? Math.min(10, Math.floor(room)) : Math.max(0.1, room);
   const middle = PAD.top + high / 2;
   const asideMiddle = (run.asideMaxM + run.asideMinM) / 2;
   return {
@@ -58,9 +59,22 @@ function placeOf(run: Run, width: number, height: number): Place {
   };
 }
 
-/** The factor by which sideways offsets are stretched at a width, for the sentence above the drawing. */
-export function sidewaysFactor(series: SpeedSeries, stretch: Stretch, width: number): number {
-  return placeOf(unrolledRun({ ...series, ...rangeOf(series, stretch) }), width, HEIGHT).stretched;
+/** What the drawing shows, in words: how long, which way, how far sideways is stretched. */
+function wordsOf(run: Run, place: Place, unit: DistanceUnit): string {
+  const length = `${formatNumber(distanceFromM(run.alongMaxM - run.alongMinM, unit), 1)}\u00a0${unit}`;
+  const bearing = bearingInWords(run.bearingDeg);
+  const way =
+    run.kind === "line"
+      ? `${length} along its line towards ${bearing}`
+      : `Out and back, ${length} along ${bearing}`;
+  const factor = formatNumber(place.stretched, place.stretched < 1 ? 1 : 0);
+  const sideways =
+    place.stretched === 1
+      ? "to the same scale"
+      : place.stretched > 1
+        ? `stretched ${factor} times`
+        : `squeezed to ${factor}`;
+  return `${way}; sideways ${sideways}.`;
 }
 
 function drawScale(surface: Surface, run: Run, place: Place, unit: DistanceUnit): void {
@@ -136,6 +150,7 @@ function nearest(run: Run, place: Place, x: number, y: number): number {
 export function UnrolledRun({ series, stretch, cursor, scale, distanceUnit }: UnrolledRunProps) {
   const run = useMemo(() => unrolledRun({ ...series, ...rangeOf(series, stretch) }), [series, stretch]);
   const latest = useRef<Place | null>(null);
+  const [width, setWidth] = useState(0);
 
   const drawStill = useCallback(
     (surface: Surface) => {
@@ -178,18 +193,22 @@ export function UnrolledRun({ series, stretch, cursor, scale, distanceUnit }: Un
     },
     [run, series, cursor],
   );
-  const length = formatNumber(distanceFromM(run.alongMaxM - run.alongMinM, distanceUnit), 1);
+  const words = wordsOf(run, placeOf(run, width, HEIGHT), distanceUnit);
   return (
-    <div className="rule-ink bg-sheet border-ink border-b">
-      <LayeredCanvas
-        height={HEIGHT}
-        label="The run, unrolled"
-        description={`${length} ${distanceUnit} along its line. The on-foil segments stand in the table below.`}
-        cursor={cursor}
-        drawStill={drawStill}
-        drawMoving={drawMoving}
-        onPointer={onPointer}
-      />
-    </div>
+    <>
+      <div className="rule-ink bg-sheet border-ink border-b">
+        <LayeredCanvas
+          height={HEIGHT}
+          label="The run, unrolled"
+          description={`${words} The on-foil segments stand in the table below.`}
+          cursor={cursor}
+          drawStill={drawStill}
+          drawMoving={drawMoving}
+          onPointer={onPointer}
+          onWidth={setWidth}
+        />
+      </div>
+      <p className="text-muted pt-1 text-sm">{words}</p>
+    </>
   );
 }

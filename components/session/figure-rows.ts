@@ -12,8 +12,14 @@ type Units = { readonly speed: SpeedUnit; readonly distance: DistanceUnit };
 
 const handbook = (key: string) => `/handbook/${key}`;
 
+/** A standard error beside its figure; a small one gets a second decimal, so that it never reads as none at all. */
+function errorText(value: number): string {
+  if (value >= 0.095) return formatNumber(value, 1);
+  return value >= 0.005 ? formatNumber(value, 2) : "<0.01";
+}
+
 const WITHHELD: Readonly<Record<Withheld["withheld"], string>> = {
-  too_short: "shorter than this",
+  too_short: "too short for it",
   quality: "quality below B",
 };
 
@@ -34,52 +40,49 @@ function bestRow(key: BestKey, best: Best | Withheld, speed: SpeedUnit): Figure 
   const label = BEST_NAMES[key];
   const href = handbook(key);
   if ("withheld" in best) return { label, href, value: null, note: WITHHELD[best.withheld] };
-  const error = formatNumber(speedFromMps(best.seMps, speed), 1);
   return {
     label,
     href,
     value: formatSpeed(best.speedMps, speed),
     unit: speed,
-    error: error === "0.0" ? "<0.1" : error,
+    error: errorText(speedFromMps(best.seMps, speed)),
   };
 }
 
 /** The figures a session is about, large: they differ by discipline. */
 export function mainRows(figures: Figures, discipline: Discipline, units: Units): Figure[] {
   const { bumps, glide } = figures;
-  const riding: Figure =
-    bumps === null
-      ? {
-          label: "Bump-riding speed",
-          value: null,
-          note: "no bump rides",
-          big: true,
-          href: handbook("bumps.ridingSpeedMps"),
-        }
-      : {
-          label: "Bump-riding speed",
-          value: formatSpeed(bumps.ridingSpeedMps, units.speed),
-          unit: units.speed,
-          error: formatNumber(speedFromMps(bumps.ridingSpeedSeMps, units.speed), 1),
-          big: true,
-        };
-  const glideRow: Figure =
-    glide === null
-      ? { label: "Glide ratio", value: null, note: "too few lulls", big: true }
-      : {
-          label: discipline === "downwind" ? "Glide ratio, apparent" : "Glide ratio",
-          value: formatNumber(glide.ratio, 1),
-          error: formatNumber((glide.ratioHigh - glide.ratioLow) / 4, 1),
-          note: `${glide.lulls} lulls`,
-          big: true,
-        };
-  const onFoil: Figure = {
-    label: "On foil",
-    value: formatShare(figures.onFoilShareOfDistance),
-    unit: "% of way",
+  const riding = { label: "Bump-riding speed", href: handbook("ridingSpeedMps"), big: true };
+  const ratio = {
+    label: discipline === "downwind" ? "Glide ratio, apparent" : "Glide ratio",
+    href: handbook("glide.ratio"),
     big: true,
   };
-  return [riding, glideRow, onFoil];
+  return [
+    bumps === null
+      ? { ...riding, value: null, note: "no bump rides" }
+      : {
+          ...riding,
+          value: formatSpeed(bumps.ridingSpeedMps, units.speed),
+          unit: units.speed,
+          error: errorText(speedFromMps(bumps.ridingSpeedSeMps, units.speed)),
+        },
+    glide === null
+      ? { ...ratio, value: null, note: "too few lulls" }
+      : {
+          ...ratio,
+          value: formatNumber(glide.ratio, 1),
+          // A 95 % interval is four standard errors wide.
+          error: errorText((glide.ratioHigh - glide.ratioLow) / 4),
+        },
+    {
+      label: "On foil",
+      value: formatShare(figures.onFoilShareOfDistance),
+      unit: "% of way",
+      href: handbook("onFoilShareOfDistance"),
+      big: true,
+    },
+  ];
 }
 
 const length = (metres: number, unit: DistanceUnit) => showDistance(metres, unit);
@@ -91,20 +94,33 @@ export function wayRows(figures: Figures, units: Units): Figure[] {
   const longest = length(figures.longestSegmentM, units.distance);
   const onFoil = length(figures.onFoilDistanceM, units.distance);
   return [
-    { label: "Distance under way", ...way, note: `± ${error.value}\u00a0${error.unit}` },
-    { label: "On-foil distance", ...onFoil },
+    {
+      label: "Distance under way",
+      ...way,
+      note: `± ${error.value}\u00a0${error.unit}`,
+      href: handbook("waterDistanceM"),
+    },
+    { label: "On-foil distance", ...onFoil, href: handbook("onFoilDistanceM") },
     {
       label: "Elapsed, moving",
       value: formatDuration(figures.elapsedS),
       note: formatDuration(figures.movingS),
+      href: handbook("movingS"),
     },
     {
       label: "Time on foil",
       value: formatDuration(figures.onFoilTimeS),
-      note: `${formatShare(figures.onFoilShareOfTime)} %`,
+      note: `${formatShare(figures.onFoilShareOfTime)}\u00a0%`,
+      href: handbook("onFoilTimeS"),
     },
-    { label: "Longest on-foil segment", ...longest, note: formatDuration(figures.longestSegmentS) },
-    { label: "Take-offs, touchdowns", value: String(figures.takeoffs), note: String(figures.touchdowns) },
+    {
+      label: "Longest on-foil segment",
+      ...longest,
+      note: formatDuration(figures.longestSegmentS),
+      href: handbook("longestSegmentM"),
+    },
+    { label: "Take-offs", value: String(figures.takeoffs), href: handbook("takeoffs") },
+    { label: "Touchdowns", value: String(figures.touchdowns), href: handbook("takeoffs") },
   ];
 }
 
@@ -112,11 +128,12 @@ export function wayRows(figures: Figures, units: Units): Figure[] {
 export function bestRows(figures: Figures, units: Units): Figure[] {
   const keys = Object.keys(BEST_NAMES) as BestKey[];
   const rows = keys.map((key) => bestRow(key, figures.bests[key], units.speed));
+  const tensHead = { label: "Mean of the best five 10 s", href: handbook("bestTensMeanMps") };
   const tens: Figure =
     figures.bestTensMeanMps === null
-      ? { label: "Mean of the best five 10 s", value: null, note: "fewer than five" }
+      ? { ...tensHead, value: null, note: "fewer than five" }
       : {
-          label: "Mean of the best five 10 s",
+          ...tensHead,
           value: formatSpeed(figures.bestTensMeanMps, units.speed),
           unit: units.speed,
         };
@@ -127,12 +144,31 @@ export function bestRows(figures: Figures, units: Units): Figure[] {
 export function bumpRows(figures: Figures, units: Units): Figure[] {
   const { bumps } = figures;
   if (bumps === null) return [];
+  const gain = formatSpeed(bumps.gainMpsMean, units.speed);
+  const interval = formatNumber(bumps.intervalSMedian, 1);
   return [
     { label: "Bump rides", value: String(bumps.rides) },
-    { label: "Bump rides per km", value: formatNumber(bumps.ridesPerKm, 1) },
-    { label: "Bump rides per hour", value: formatNumber(bumps.ridesPerHour, 0) },
-    { label: "Mean gain of a surge", value: formatSpeed(bumps.gainMpsMean, units.speed), unit: units.speed },
-    { label: "Median time between peaks", value: formatNumber(bumps.intervalSMedian, 1), unit: "s" },
-    { label: "Lulls that kept the foil", value: formatShare(bumps.lullsKeptShare), unit: "%" },
+    {
+      label: "Bump rides per km",
+      value: formatNumber(bumps.ridesPerKm, 1),
+      href: handbook("ridesPerKm"),
+    },
+    {
+      label: "Bump rides per hour",
+      value: formatNumber(bumps.ridesPerHour, 0),
+      href: handbook("ridesPerHour"),
+    },
+    { label: "Mean gain of a surge", value: gain, unit: units.speed, href: handbook("gainMpsMean") },
+    Number.isFinite(bumps.intervalSMedian)
+      ? { label: "Median time between peaks", value: interval, unit: "s", href: handbook("intervalSMedian") }
+      : { label: "Median time between peaks", value: null, note: "one ride alone" },
+    Number.isFinite(bumps.lullsKeptShare)
+      ? {
+          label: "Lulls that kept the foil",
+          value: formatShare(bumps.lullsKeptShare),
+          unit: "%",
+          href: handbook("lullsKeptShare"),
+        }
+      : { label: "Lulls that kept the foil", value: null, note: "no lulls" },
   ];
 }

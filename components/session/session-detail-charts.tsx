@@ -4,6 +4,7 @@ import { useMemo, useState, type ReactNode } from "react";
 import { LullFan } from "@/components/chart/lull-fan";
 import { Timeline } from "@/components/chart/timeline";
 import { UnrolledRun } from "@/components/chart/unrolled-run";
+import { Disclosure } from "@/components/ui/disclosure";
 import { Section } from "@/components/ui/section";
 import type { Figures } from "@/lib/analysis/analysis";
 import type { TrackPayload } from "@/lib/analysis/track-payload";
@@ -11,6 +12,8 @@ import type { SpeedScale } from "@/lib/display/speed-ramp";
 import type { TimeCursor } from "@/lib/display/time-cursor";
 import type { Stretch } from "@/lib/track/speed-series";
 import { BumpTable } from "./bump-table";
+import { LullTable } from "./lull-table";
+import { MinuteTable } from "./minute-table";
 import { QualityReport } from "./quality-report";
 import { Scrubber } from "./scrubber";
 import { SegmentTable } from "./segment-table";
@@ -47,6 +50,7 @@ export function SessionDetailCharts(props: SessionDetailChartsProps) {
   const segments = useMemo(() => track.segments.filter((one) => overlaps(one, shown)), [track, shown]);
   const rides = useMemo(() => track.bumpRides.filter((one) => overlaps(one, shown)), [track, shown]);
   const lulls = useMemo(() => track.lulls.filter((one) => overlaps(one, shown)), [track, shown]);
+  const tableKey = `${shown.startMs}-${shown.endMs}`;
   const table = {
     timeZone,
     speedUnit: units.speed,
@@ -92,7 +96,7 @@ export function SessionDetailCharts(props: SessionDetailChartsProps) {
           timeZone={timeZone}
         />
         <StretchControls
-          key={`${shown.startMs}-${shown.endMs}`}
+          key={tableKey}
           whole={track.window}
           stretch={stretch}
           isZoomed={isZoomed}
@@ -103,6 +107,9 @@ export function SessionDetailCharts(props: SessionDetailChartsProps) {
           onZoom={onZoom}
           onTouchBrushes={setTouchBrushes}
         />
+        <Disclosure summary="Speed minute by minute, as a table" className="no-print mt-2">
+          <MinuteTable key={tableKey} series={track.series} stretch={shown} {...table} />
+        </Disclosure>
       </Section>
       {more}
       <Section
@@ -111,6 +118,9 @@ export function SessionDetailCharts(props: SessionDetailChartsProps) {
         reading="A line a lull: energy height paid against way made. The ruled slope is the pooled glide ratio; flatter is better. On waves and with wind it is an apparent value."
       >
         <LullFan series={track.series} lulls={lulls} glide={figures.glide} />
+        <Disclosure summary="The lulls as a table" className="no-print">
+          <LullTable key={tableKey} lulls={lulls} {...table} />
+        </Disclosure>
       </Section>
       <Section id="segments" title="On-foil segments" reading="Choose one to work its figures out.">
         <SegmentTable segments={segments} {...table} />
@@ -120,7 +130,7 @@ export function SessionDetailCharts(props: SessionDetailChartsProps) {
         title="Bump rides"
         reading="Over the middle between a peak and its neighbouring lulls."
       >
-        <BumpTable rides={rides} {...table} />
+        <BumpTable bumpRides={rides} {...table} />
       </Section>
       <Section id="quality" title="Quality of the recording">
         <QualityReport quality={track.quality} />

@@ -2,8 +2,8 @@
 
 import { useRef, useState, type FormEvent } from "react";
 import { Button } from "@/components/ui/button";
-import { DateInput } from "@/components/ui/date-input";
 import { Field } from "@/components/ui/field";
+import { TextInput } from "@/components/ui/text-input";
 import { formatTime } from "@/lib/display/format-time";
 import { parseLocalTime } from "@/lib/display/parse-local-time";
 import type { TimeCursor } from "@/lib/display/time-cursor";
@@ -58,10 +58,10 @@ export function StretchControls(props: StretchControlsProps) {
     <form onSubmit={submit} className="no-print flex flex-wrap items-end gap-3" noValidate>
       <Field label="From" name="stretch-from" error={problem === "" ? null : problem}>
         {(control) => (
-          <DateInput
+          <TextInput
             {...control}
-            type="time"
-            step={1}
+            className="num max-w-32"
+            autoComplete="off"
             ref={from}
             defaultValue={formatTime(shown.startMs, timeZone, "seconds")}
           />
@@ -69,10 +69,10 @@ export function StretchControls(props: StretchControlsProps) {
       </Field>
       <Field label="To" name="stretch-to">
         {(control) => (
-          <DateInput
+          <TextInput
             {...control}
-            type="time"
-            step={1}
+            className="num max-w-32"
+            autoComplete="off"
             ref={to}
             defaultValue={formatTime(shown.endMs, timeZone, "seconds")}
           />
@@ -85,14 +85,11 @@ export function StretchControls(props: StretchControlsProps) {
       <Button look="quiet" onClick={() => brush(Math.min(shown.startMs, here() - 10_000), here())}>
         End at the cursor
       </Button>
-      <Button
-        look="quiet"
-        className="sm:hidden"
-        aria-pressed={touchBrushes}
-        onClick={() => onTouchBrushes(!touchBrushes)}
-      >
-        {touchBrushes ? "Finger moves the cursor" : "Finger brushes"}
-      </Button>
+      <span className="hidden any-pointer-coarse:contents">
+        <Button look="quiet" aria-pressed={touchBrushes} onClick={() => onTouchBrushes(!touchBrushes)}>
+          Brush with a finger
+        </Button>
+      </span>
       {stretch !== null && (
         <>
           <Button onClick={() => onZoom(!isZoomed)}>{isZoomed ? "Zoom out" : "Zoom to the stretch"}</Button>

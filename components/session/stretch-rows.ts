@@ -16,7 +16,7 @@ export type StretchTableContext = {
 };
 
 /** Rows of a table drawn at once; a gusty hour has hundreds of bump rides. */
-export const ROWS_AT_ONCE = 50;
+export const ROWS_AT_ONCE = 25;
 /** A mark that jumps five times a second is as good as one that jumps with every frame, and costs a tenth. */
 const MARK_EVERY_MS = 200;
 
