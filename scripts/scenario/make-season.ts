@@ -7,6 +7,7 @@ import type { Form } from "./motion";
 import { makeQuiver } from "./gear";
 import type { Context } from "@/lib/server/context/context";
 import { setGearSpans } from "@/lib/server/gear/set-gear-spans";
+import { listPlaces } from "@/lib/server/places/list-places";
 import { recordPlace } from "@/lib/server/places/record-place";
 import { getSession } from "@/lib/server/sessions/get-session";
 import { updateSession } from "@/lib/server/sessions/update-session";
@@ -66,7 +67,8 @@ async function addSession(ctx: Context, plan: PlannedSession, gpx: string, setup
     ["start", plan.from],
     ["end", plan.to],
   ] as const) {
-    await recordPlace(ctx, { sessionId, end, name: SPOTS[spot].name });
+    const known = (await listPlaces(ctx)).some((place) => place.name === SPOTS[spot].name);
+    if (!known) await recordPlace(ctx, { sessionId, end, name: SPOTS[spot].name });
   }
   const second = plan.setups[1];
   if (second !== undefined) {
