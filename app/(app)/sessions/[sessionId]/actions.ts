@@ -16,7 +16,7 @@ import { getSession } from "@/lib/server/sessions/get-session";
 import { trimSession } from "@/lib/server/sessions/trim-session";
 import { updateSession } from "@/lib/server/sessions/update-session";
 import { formatSpeed } from "@/lib/display/format-speed";
-import { speedToMps } from "@/lib/units/speed";
+import { speedToMps, type SpeedUnit } from "@/lib/units/speed";
 import { CLOCK_HINT, gearRows, gearSpansOf, refuse, underFormNames } from "./form-input";
 import { detailValues, trimValues } from "./session-values";
 
@@ -36,8 +36,19 @@ function numberOf(text: string, unit: string, toSi = (value: number) => value): 
   return value === null ? text : toSi(value);
 }
 
-/** Highest wind the verb takes, m/s. */
-const WIND_MPS_MAX = 60;
+/** Highest wind, wave period and wave height that the verb takes. */
+const [WIND_MPS_MAX, PERIOD_S_MAX, HEIGHT_M_MAX] = [60, 30, 20];
+
+/** Errors of the conditions in the units of the form, and so that they can be told apart above it. */
+function detailWords(unit: SpeedUnit) {
+  const words = {
+    windFromDeg: "Enter the wind in degrees from 0 to 360, or as a compass point such as WSW.",
+    windSpeedMps: `Enter a wind speed from 0 to ${formatSpeed(WIND_MPS_MAX, unit)} ${unit}.`,
+    wavePeriodS: `Enter a wave period from 0 to ${PERIOD_S_MAX} s.`,
+    waveHeightM: `Enter a wave height from 0 to ${HEIGHT_M_MAX} m.`,
+  };
+  return Object.fromEntries(Object.entries(words).map(([name, text]) => [name, { name, text }]));
+}
 
 /** Changes what was said about the session; fields that come back as they were shown stay untouched. */
 export async function saveDetailsAction(_: FormState, form: FormData): Promise<FormState> {
@@ -64,16 +75,7 @@ export async function saveDetailsAction(_: FormState, form: FormData): Promise<F
     );
     if (changed.length === 0) return "Nothing was changed.";
     const change = Object.fromEntries(changed.map(([name, value]) => [name, value()]));
-    const names = {
-      windFromDeg: {
-        name: "windFromDeg",
-        text: "Enter degrees from 0 to 360, or a compass point such as WSW.",
-      },
-      windSpeedMps: {
-        name: "windSpeedMps",
-        text: `Enter a wind speed from 0 to ${formatSpeed(WIND_MPS_MAX, units.speed)} ${units.speed}.`,
-      },
-    };
+    const names = detailWords(units.speed);
     await underFormNames(names, () => updateSession(ctx, sessionId, change));
     redraw(sessionId);
     return "discipline" in change ? "Saved, and every figure worked out again." : "Details saved.";
