@@ -58,6 +58,8 @@ describe("requireSameOrigin", () => {
     [{ "sec-fetch-site": "none" }],
     [{ origin: "http://evil.example", host: "trimwake.example" }],
     [{ origin: "null", host: "trimwake.example" }],
+    [{ origin: "http://evil.example", host: "trimwake.example", "x-forwarded-host": "evil.example" }],
+    [{ origin: "not an origin", host: "trimwake.example" }],
     [{}],
   ])("refuses everybody else: %o", (headers) => {
     expect(ask(headers)).toThrow(AppError);
@@ -96,8 +98,35 @@ describe("proxy", () => {
     expect(headers.get("content-security-policy")).toContain("frame-ancestors 'none'");
   });
 
+  test("keeps what another site sends to a page away from its actions, and says so in the log", () => {
+    const send = (headers: Record<string, string>) =>
+      proxy(new NextRequest("http://localhost:3000/sign-in", { method: "POST", headers }));
+    for (const headers of [
+      { "sec-fetch-site": "cross-site", origin: "http://localhost:3000", host: "localhost:3000" },
+      { origin: "null", host: "localhost:3000" },
+      { origin: "no origin", host: "localhost:3000" },
+      {},
+    ]) {
+      const answer = send(headers);
+      expect(answer.status).toBe(403);
+      expect(answer.headers.get("cache-control")).toBe("no-store");
+    }
+    expect(lines.map((line) => JSON.parse(line).code)).toEqual(Array(4).fill("cross_site"));
+    expect(send({ "sec-fetch-site": "same-origin" }).status).toBe(200);
+    expect(send({ origin: "http://localhost:3000", host: "localhost:3000" }).status).toBe(200);
+  });
+
   test.each([
     ["/", true],
+    ["/iconoclast", true],
+    ["/icon.svg", false],
+    ["/icon.svg/x", true],
+    ["/fonts/x", true],
+    ["/robots.txt", true],
+    ["/favicon.ico", false],
+    ["/api/uploadsx", true],
+    ["/api/uploads/x", true],
+    ["/_next/staticx", true],
     ["/sessions", true],
     ["/api/health", true],
     ["/api/uploads", false],

@@ -1,5 +1,7 @@
 import { AppError, type AppErrorCode } from "@/lib/errors/app-error";
+import { env } from "@/lib/server/env/env";
 import { describeError } from "./form-state";
+import { isSameOrigin } from "./same-origin";
 
 const STATUS: Readonly<Record<AppErrorCode, number>> = {
   unauthenticated: 401,
@@ -14,19 +16,9 @@ const STATUS: Readonly<Record<AppErrorCode, number>> = {
 
 /** Refuses a state-changing request that another site sent: route handlers have no check of their own. */
 export function requireSameOrigin(request: Request): void {
-  const site = request.headers.get("sec-fetch-site");
-  if (site === "same-origin") return;
-  const origin = request.headers.get("origin");
-  const host = request.headers.get("x-forwarded-host") ?? request.headers.get("host");
-  if (
-    site === null &&
-    origin !== null &&
-    host !== null &&
-    URL.canParse(origin) &&
-    new URL(origin).host === host
-  )
-    return;
-  throw new AppError("forbidden", "This request did not come from Trimwake's own pages.");
+  if (!isSameOrigin(request.headers, env().trustedProxyHops > 0)) {
+    throw new AppError("forbidden", "This request did not come from Trimwake's own pages.");
+  }
 }
 
 /** Runs a route's work; errors become problem details (RFC 9457) with `no-store`. */
