@@ -1,3 +1,4 @@
+import { DrizzleQueryError } from "drizzle-orm/errors";
 import { NextRequest } from "next/server";
 import { beforeEach, describe, expect, test, vi } from "vitest";
 import { AppError } from "@/lib/errors/app-error";
@@ -6,6 +7,7 @@ import { clientAddress } from "@/lib/server/adapter/request-context";
 import { requireSameOrigin, routeResponse } from "@/lib/server/adapter/route-response";
 import { cookieAttributes } from "@/lib/server/auth/session-cookie";
 import { SESSION_COOKIE } from "@/lib/server/auth/session-cookie-name";
+import { logRequestError } from "@/lib/server/context/log-request-error";
 import { config, proxy } from "@/proxy";
 
 let lines: string[];
@@ -101,12 +103,13 @@ describe("proxy", () => {
   test("keeps what another site sends to a page away from its actions, and says so in the log", () => {
     const send = (headers: Record<string, string>) =>
       proxy(new NextRequest("http://localhost:3000/sign-in", { method: "POST", headers }));
-    for (const headers of [
+    const foreign: Record<string, string>[] = [
       { "sec-fetch-site": "cross-site", origin: "http://localhost:3000", host: "localhost:3000" },
       { origin: "null", host: "localhost:3000" },
       { origin: "no origin", host: "localhost:3000" },
       {},
-    ]) {
+    ];
+    for (const headers of foreign) {
       const answer = send(headers);
       expect(answer.status).toBe(403);
       expect(answer.headers.get("cache-control")).toBe("no-store");
@@ -151,9 +154,27 @@ describe("errors on their way out", () => {
     expect(lines.join("")).toContain(reference);
   });
 
-  test("a full disk is told as such, however deep it hides", () => {
+  test("a failed query leaves its statement in the log, and none of its parameters", async () => {
+    const params = ["runa@riders.example", "$argon2id$secret"];
+    const failed = () =>
+      new DrizzleQueryError("insert into user values (?, ?)", params, new Error("UNIQUE constraint failed"));
+    await routeResponse(async () => {
+      throw failed();
+    });
+    const seen = Object.assign(failed(), { digest: "12345" });
+    logRequestError(seen, { path: "/reset?token=abc", method: "GET", routePath: "/reset" });
+    const text = lines.join("");
+    expect(text).not.toMatch(/runa@|argon2id|token=/);
+    expect(text.match(/insert into user values/g)).toHaveLength(2);
+    expect(text).toContain("UNIQUE constraint failed");
+    expect(JSON.parse(lines[1] ?? "")).toMatchObject({ reference: "12345", path: "/reset" });
+    // Next prints the same error on its own.
+    expect(`${seen.message}${seen.stack}${String(seen.params)}`).not.toMatch(/runa@|argon2id/);
+  });
+
+  test("a full disk is told as such, however deep it hides", async () => {
     const full = Object.assign(new Error("database or disk is full"), { code: "SQLITE_FULL" });
-    const { code, message } = describeError(new Error("Failed query", { cause: full }));
+    const { code, message } = await describeError(new Error("Failed query", { cause: full }));
     expect(code).toBe("internal");
     expect(message).toMatch(/^There is no room left on this server's disk\. Nothing was changed\./);
   });

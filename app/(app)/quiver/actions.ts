@@ -7,6 +7,7 @@ import { parseDecimal } from "@/lib/display/parse-decimal";
 import { DIMENSION_FIELDS, PART_KINDS, type PartKind } from "@/lib/gear/dimension-fields";
 import { SETUP_PART_COLUMNS } from "@/lib/gear/part-schema";
 import { formAction } from "@/lib/server/adapter/form-state";
+import { pageRead } from "@/lib/server/adapter/page";
 import { requestContext } from "@/lib/server/adapter/request-context";
 import { createPart, retirePart, updatePart } from "@/lib/server/gear/save-part";
 import { createSetup, retireSetup, updateSetup } from "@/lib/server/gear/save-setup";
@@ -88,7 +89,7 @@ export async function saveSetupAction(_: FormState, form: FormData): Promise<For
 /** Takes a part out of use (`retired` = 1) or back into it. */
 export async function retirePartAction(form: FormData): Promise<void> {
   const retired = textOf(form, "retired") === "1";
-  await retirePart(await requestContext(), textOf(form, "partId"), retired);
+  await pageRead("/quiver", async () => retirePart(await requestContext(), textOf(form, "partId"), retired));
   revalidatePath("/quiver");
   redirect(`/quiver?saved=${retired ? "part-retired" : "part"}`);
 }
@@ -96,7 +97,9 @@ export async function retirePartAction(form: FormData): Promise<void> {
 /** Takes a setup out of use (`retired` = 1) or back into it. */
 export async function retireSetupAction(form: FormData): Promise<void> {
   const retired = textOf(form, "retired") === "1";
-  await retireSetup(await requestContext(), textOf(form, "setupId"), retired);
+  await pageRead("/quiver", async () =>
+    retireSetup(await requestContext(), textOf(form, "setupId"), retired),
+  );
   revalidatePath("/quiver");
   redirect(`/quiver?saved=${retired ? "setup-retired" : "setup"}`);
 }

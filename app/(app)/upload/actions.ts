@@ -18,7 +18,7 @@ export async function importFileAction(uploadId: string, setupId: string | null)
   try {
     return { ok: true, verdicts: await importUpload(await requestContext(), { uploadId, setupId }) };
   } catch (error) {
-    const { code, message } = describeError(error);
+    const { code, message } = await describeError(error);
     return { ok: false, message, signedOut: code === "unauthenticated" };
   }
 }
@@ -45,7 +45,7 @@ async function done(work: () => Promise<unknown>): Promise<Done> {
     await work();
     return { ok: true };
   } catch (error) {
-    return { ok: false, message: describeError(error).message };
+    return { ok: false, message: (await describeError(error)).message };
   }
 }
 
@@ -73,6 +73,6 @@ async function takePlain(file: File, setupId: string | null): Promise<PlainFile>
     const verdicts = await importUpload(ctx, { uploadId, setupId });
     return { name: file.name, problem: "", verdicts };
   } catch (error) {
-    return { name: file.name, problem: describeError(error).message, verdicts: [] };
+    return { name: file.name, problem: (await describeError(error)).message, verdicts: [] };
   }
 }

@@ -2,7 +2,9 @@ import { unstable_rethrow } from "next/navigation";
 import { newId } from "@/db/new-id";
 import { AppError, type FieldErrors } from "@/lib/errors/app-error";
 import type { FormState } from "@/lib/display/form-state";
+import { errorFacts } from "@/lib/server/context/error-facts";
 import { logEvent } from "@/lib/server/context/log";
+import { logDenial } from "./log-denial";
 
 const SECRET_FIELD = /password|token/i;
 
@@ -16,24 +18,18 @@ export function formValues(form: FormData): Record<string, string> {
 }
 
 /** An error as the person may see it: known ones in their own words, unknown ones by a reference id only. */
-export function describeError(error: unknown): {
+export async function describeError(error: unknown): Promise<{
   code: AppError["code"];
   message: string;
   fields: FieldErrors;
-} {
+}> {
   if (error instanceof AppError) {
-    if (error.code === "forbidden" || error.code === "not_found") {
-      logEvent("warn", "denied", { code: error.code, message: error.message });
-    }
+    if (error.code === "forbidden" || error.code === "not_found") await logDenial(error);
     return { code: error.code, message: error.message, fields: error.fields };
   }
   const reference = newId();
   const isFull = isDiskFull(error);
-  logEvent("error", "unexpected", {
-    reference,
-    error: error instanceof Error ? `${error.name}: ${error.message}` : String(error),
-    stack: error instanceof Error ? error.stack : undefined,
-  });
+  logEvent("error", "unexpected", { reference, ...errorFacts(error) });
   const what = isFull ? "There is no room left on this server's disk." : "Something went wrong on our side.";
   return { code: "internal", message: `${what} Nothing was changed. Reference ${reference}.`, fields: {} };
 }
@@ -52,7 +48,7 @@ export async function formAction(form: FormData, work: () => Promise<string>): P
     return { status: "ok", message: await work(), fields: {}, values: {} };
   } catch (error) {
     unstable_rethrow(error);
-    const { message, fields } = describeError(error);
+    const { message, fields } = await describeError(error);
     return { status: "error", message, fields, values: formValues(form) };
   }
 }

@@ -1,6 +1,7 @@
 import { AppError, type AppErrorCode } from "@/lib/errors/app-error";
 import { env } from "@/lib/server/env/env";
 import { describeError } from "./form-state";
+import { logDenial } from "./log-denial";
 import { isSameOrigin } from "./same-origin";
 
 const STATUS: Readonly<Record<AppErrorCode, number>> = {
@@ -26,7 +27,8 @@ export async function routeResponse(work: () => Promise<Response>): Promise<Resp
   try {
     return await work();
   } catch (error) {
-    const { code, message, fields } = describeError(error);
+    if (error instanceof AppError && error.code === "unauthenticated") await logDenial(error);
+    const { code, message, fields } = await describeError(error);
     const status = STATUS[code];
     return Response.json(
       { type: "about:blank", title: message, status, code, fields },
