@@ -106,10 +106,10 @@ function drawHeart(surface: Surface, axis: TimeAxis, series: SpeedSeries, top: n
   }
   context.stroke();
   context.fillStyle = tokens.muted;
-  context.font = '11px "Spline Sans Mono", ui-monospace, monospace';
-  context.textAlign = "right";
+  context.font = '10px "Spline Sans Mono", ui-monospace, monospace';
+  context.textAlign = "left";
   context.textBaseline = "top";
-  context.fillText(`${Math.round(low)}–${Math.round(high)} bpm`, axis.rightPx, top - 4);
+  context.fillText(`${Math.round(low)}–${Math.round(high)}`, 0, top + HEART / 2 + 6);
 }
 
 /** Draws the strips under the speed chart: solid blocks on foil, the comb of bump rides, gear bars, heart rate. */
@@ -132,7 +132,7 @@ export function drawStrips(surface: Surface, axis: TimeAxis, strips: Strips, top
     y += GEAR + SPACE;
   }
   if (strips.series.heartRateBpm !== null) {
-    label(surface, "heart", y + HEART / 2);
+    label(surface, "bpm", y + HEART / 2 - 3);
     drawHeart(surface, axis, strips.series, y);
   }
 }

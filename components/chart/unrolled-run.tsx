@@ -133,7 +133,7 @@ function drawTrack(
 }
 
 /** The nearest sample to a place on the drawing, searched coarsely and then closely. */
-function nearest(run: Run, place: Place, x: number, y: number): number {
+function nearestSample(run: Run, place: Place, x: number, y: number): number {
   const n = run.alongM.length;
   const away = (k: number) =>
     (place.x(run.alongM[k] ?? 0) - x) ** 2 + ((place.y(run.asideM[k] ?? 0) - y) / 2) ** 2;
@@ -163,8 +163,11 @@ export function UnrolledRun({ series, stretch, cursor, scale, distanceUnit }: Un
   );
   const drawMoving = useCallback(
     (surface: Surface, timeMs: number | null) => {
-      const k = timeMs === null ? -1 : Math.round((timeMs - series.startMs) / series.stepMs) - run.first;
-      if (k < 0 || k >= run.alongM.length) return;
+      if (timeMs === null) return;
+      const nearest = Math.round((timeMs - series.startMs) / series.stepMs) - run.first;
+      // The ends of a stretch lie between samples: one step outside is still its end.
+      const k = Math.min(Math.max(nearest, 0), run.alongM.length - 1);
+      if (k < 0 || Math.abs(k - nearest) > 1) return;
       const place = placeOf(run, surface.width, surface.height);
       const x = place.x(run.alongM[k] ?? 0);
       const { context, tokens } = surface;
@@ -188,7 +191,7 @@ export function UnrolledRun({ series, stretch, cursor, scale, distanceUnit }: Un
       if (latest.current === null || run.alongM.length === 0) return;
       if (event.type === "pointermove" && event.pointerType !== "mouse" && event.buttons === 0) return;
       const y = event.clientY - event.currentTarget.getBoundingClientRect().top;
-      const k = nearest(run, latest.current, xPx, y);
+      const k = nearestSample(run, latest.current, xPx, y);
       cursor.set(series.startMs + (run.first + k) * series.stepMs);
     },
     [run, series, cursor],

@@ -1,6 +1,7 @@
 "use client";
 
 import { useEffect, useRef, type KeyboardEvent } from "react";
+import { PLOT_LEFT, PLOT_RIGHT } from "@/components/chart/speed-plot";
 import { durationInWords } from "@/lib/display/format-duration";
 import { formatTime } from "@/lib/display/format-time";
 import { speedWithUnit } from "@/lib/display/format-speed";
@@ -86,7 +87,9 @@ export function Scrubber(props: ScrubberProps) {
         ref={slider}
         id="scrubber"
         type="range"
-        className="h-11 w-full accent-buoy sm:h-8"
+        // The thumb runs under the time axis of the timeline.
+        style={{ marginLeft: PLOT_LEFT - 8, width: `calc(100% - ${PLOT_LEFT + PLOT_RIGHT - 16}px)` }}
+        className="h-11 accent-buoy sm:h-8"
         min={view.startMs}
         max={view.endMs}
         step={1000}
@@ -94,7 +97,7 @@ export function Scrubber(props: ScrubberProps) {
         onKeyDown={onKeyDown}
         onChange={(event) => move(Number(event.currentTarget.value))}
       />
-      <output ref={readout} htmlFor="scrubber" className="num text-sm" aria-live="off" />
+      <output ref={readout} htmlFor="scrubber" className="num pb-4 text-sm" aria-live="off" />
     </div>
   );
 }

@@ -18,6 +18,7 @@ import { QualityReport } from "./quality-report";
 import { Scrubber } from "./scrubber";
 import { SegmentTable } from "./segment-table";
 import type { SessionData } from "./session-data";
+import { StretchFigures } from "./session-figures";
 import { StretchControls } from "./stretch-controls";
 
 export type SessionDetailChartsProps = {
@@ -96,7 +97,6 @@ export function SessionDetailCharts(props: SessionDetailChartsProps) {
           timeZone={timeZone}
         />
         <StretchControls
-          key={tableKey}
           whole={track.window}
           stretch={stretch}
           isZoomed={isZoomed}
@@ -107,6 +107,7 @@ export function SessionDetailCharts(props: SessionDetailChartsProps) {
           onZoom={onZoom}
           onTouchBrushes={setTouchBrushes}
         />
+        {stretch !== null && <StretchFigures figures={figures} discipline={data.discipline} units={units} />}
         <Disclosure summary="Speed minute by minute, as a table" className="no-print mt-2">
           <MinuteTable key={tableKey} series={track.series} stretch={shown} {...table} />
         </Disclosure>

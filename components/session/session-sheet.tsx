@@ -84,7 +84,13 @@ function Sheet({ data, track }: { data: SessionData; track: TrackPayload }) {
           windFromDeg={data.windFromDeg}
           label={`Map of ${data.title}`}
         />
-        <MainFigures figures={figures} discipline={discipline} units={units} of={of} />
+        <MainFigures
+          figures={figures}
+          discipline={discipline}
+          units={units}
+          of={of}
+          onWhole={stretch === null ? undefined : () => brush(null)}
+        />
       </div>
       <SessionDetailCharts
         data={data}

@@ -1,6 +1,6 @@
 "use client";
 
-import { useRef, useState, type FormEvent } from "react";
+import { useEffect, useRef, useState, type FormEvent } from "react";
 import { Button } from "@/components/ui/button";
 import { Field } from "@/components/ui/field";
 import { TextInput } from "@/components/ui/text-input";
@@ -22,8 +22,8 @@ export type StretchControlsProps = {
 };
 
 /**
- * Brushing without a mouse: times to type, the cursor's place as an end, a finger that brushes; zoom and back. Give it a
- * key that changes with the stretch: its fields start from it.
+ * Brushing without a mouse: times to type, the cursor's place as an end, a finger that brushes; zoom and back. The
+ * fields follow the stretch wherever it is brushed from.
  */
 export function StretchControls(props: StretchControlsProps) {
   const { whole, stretch, isZoomed, touchBrushes, timeZone, cursor, onStretch, onZoom, onTouchBrushes } =
@@ -31,7 +31,12 @@ export function StretchControls(props: StretchControlsProps) {
   const shown = stretch ?? whole;
   const from = useRef<HTMLInputElement>(null);
   const to = useRef<HTMLInputElement>(null);
+  const submitButton = useRef<HTMLButtonElement>(null);
   const [problem, setProblem] = useState("");
+  useEffect(() => {
+    if (from.current !== null) from.current.value = formatTime(shown.startMs, timeZone, "seconds");
+    if (to.current !== null) to.current.value = formatTime(shown.endMs, timeZone, "seconds");
+  }, [shown.startMs, shown.endMs, timeZone]);
 
   const brush = (startMs: number | null, endMs: number | null) => {
     if (startMs === null || endMs === null) {
@@ -78,7 +83,9 @@ export function StretchControls(props: StretchControlsProps) {
           />
         )}
       </Field>
-      <Button type="submit">Work out this stretch</Button>
+      <Button type="submit" ref={submitButton}>
+        Work out this stretch
+      </Button>
       <Button look="quiet" onClick={() => brush(here(), Math.max(shown.endMs, here() + 10_000))}>
         Start at the cursor
       </Button>
@@ -93,7 +100,15 @@ export function StretchControls(props: StretchControlsProps) {
       {stretch !== null && (
         <>
           <Button onClick={() => onZoom(!isZoomed)}>{isZoomed ? "Zoom out" : "Zoom to the stretch"}</Button>
-          <Button onClick={() => onStretch(null)}>Whole session</Button>
+          <Button
+            onClick={() => {
+              // The button goes away with the stretch: the focus stays beside it.
+              submitButton.current?.focus();
+              onStretch(null);
+            }}
+          >
+            Whole session
+          </Button>
         </>
       )}
     </form>
