@@ -105,12 +105,15 @@ export async function savePlacesAction(_: FormState, form: FormData): Promise<Fo
   });
 }
 
-/** Sets both ends by hand, or (button `reset`) goes back to the detected ones. */
+/**
+ * Sets both ends by hand, or (button `detected`) goes back to the detected ones. The button may not be named "reset":
+ * that would hide the form's own reset, which React calls after an action.
+ */
 export async function saveTrimAction(_: FormState, form: FormData): Promise<FormState> {
   return formAction(form, async () => {
     const sessionId = textOf(form, "sessionId");
     const ctx = await requestContext();
-    if (textOf(form, "reset") !== "") {
+    if (textOf(form, "detected") !== "") {
       await trimSession(ctx, sessionId, null);
       redraw(sessionId);
       return "The ends are the detected ones again, and every figure was worked out again.";

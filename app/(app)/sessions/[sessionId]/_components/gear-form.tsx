@@ -7,12 +7,15 @@ import { Disclosure } from "@/components/ui/disclosure";
 import { SubmitButton } from "@/components/ui/submit-button";
 import { GearRows, type SetupOption } from "./gear-rows";
 import { PanelForm, type PanelProps } from "./panel-form";
+import { useBrushedStretch } from "./use-brushed-stretch";
 
 const SUMMARY = "What was ridden";
 
 /** Tags the session with a setup, or with several and the times they were changed. */
 export function GearForm(props: PanelProps & { setups: readonly SetupOption[]; timeZone: string }) {
   const { setups, timeZone, ...panel } = props;
+  // Heard here: the rows draw anew after an answer and would forget it.
+  const stretch = useBrushedStretch();
   if (setups.length === 0) {
     return (
       <Disclosure summary={SUMMARY} className="rule-hair">
@@ -46,7 +49,7 @@ export function GearForm(props: PanelProps & { setups: readonly SetupOption[]; t
     >
       {({ values, errorOf }) => (
         <>
-          <GearRows values={values} errorOf={errorOf} setups={setups} timeZone={timeZone} />
+          <GearRows stretch={stretch} values={values} errorOf={errorOf} setups={setups} timeZone={timeZone} />
           <p className="text-muted text-sm">
             Setups are put together in the{" "}
             <Link href="/quiver" className="link">

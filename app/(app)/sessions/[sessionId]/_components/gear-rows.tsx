@@ -6,6 +6,7 @@ import { SelectField, TextField } from "@/components/ui/fields";
 import { FieldSet } from "@/components/ui/field-set";
 import { fieldId } from "@/components/ui/field";
 import { useLive } from "@/components/ui/use-live";
+import type { Stretch } from "@/lib/track/speed-series";
 import { StretchButton } from "./stretch-button";
 
 export type SetupOption = { readonly value: string; readonly label: string };
@@ -33,12 +34,13 @@ function rowsOf(values: Readonly<Record<string, string>>): Row[] {
 
 /** One row per setup ridden. A single one without times is the whole session; times appear when there is more to say. */
 export function GearRows(props: {
+  stretch: Stretch | null;
   values: Readonly<Record<string, string>>;
   errorOf: (name: string) => string | undefined;
   setups: readonly SetupOption[];
   timeZone: string;
 }) {
-  const { values, errorOf, setups, timeZone } = props;
+  const { stretch, values, errorOf, setups, timeZone } = props;
   const live = useLive();
   const [rows, setRows] = useState(() => rowsOf(values));
   const [isPart, setPart] = useState(false);
@@ -54,6 +56,7 @@ export function GearRows(props: {
         {drawn.map((row, index) => (
           <li key={row.id} className={isWhole ? undefined : "rule-hair pb-4"}>
             <GearRow
+              stretch={stretch}
               row={row}
               index={index}
               isWhole={isWhole}
@@ -104,6 +107,7 @@ const HINT =
 const EMPTY = { setupId: "", from: "", to: "", filled: 0 };
 
 function GearRow(props: {
+  stretch: Stretch | null;
   row: Row;
   index: number;
   isWhole: boolean;
@@ -113,7 +117,7 @@ function GearRow(props: {
   onFill: (ends: { from: string; to: string }) => void;
   onRemove: (() => void) | undefined;
 }) {
-  const { row, index, isWhole, errorOf, setups, timeZone, onFill, onRemove } = props;
+  const { stretch, row, index, isWhole, errorOf, setups, timeZone, onFill, onRemove } = props;
   const [setupName, fromName, toName] = [`gear-setup-${index}`, `gear-from-${index}`, `gear-to-${index}`];
   return (
     <div className="flex flex-col gap-3">
@@ -127,7 +131,7 @@ function GearRow(props: {
       />
       {!isWhole && (
         <>
-          <div key={row.filled} className="grid grid-cols-2 gap-4">
+          <div key={row.filled} className="grid grid-cols-2 items-end gap-4">
             <TextField
               name={fromName}
               label="From"
@@ -146,7 +150,12 @@ function GearRow(props: {
             />
           </div>
           <div className="flex flex-wrap items-center gap-3">
-            <StretchButton timeZone={timeZone} what={`for setup ${index + 1}`} onUse={onFill} />
+            <StretchButton
+              stretch={stretch}
+              timeZone={timeZone}
+              what={`for setup ${index + 1}`}
+              onUse={onFill}
+            />
             {onRemove && (
               <Button size="small" onClick={onRemove}>
                 Remove<span className="sr-only"> setup {index + 1}</span>

@@ -3,23 +3,24 @@
 import { Button } from "@/components/ui/button";
 import { useLive } from "@/components/ui/use-live";
 import { formatTime } from "@/lib/display/format-time";
-import { useBrushedStretch } from "./use-brushed-stretch";
+import type { Stretch } from "@/lib/track/speed-series";
 
 export type Ends = { readonly from: string; readonly to: string };
 
 /** Puts the ends of the stretch that is brushed on the timeline into a form. */
 export function StretchButton({
+  stretch,
   timeZone,
   what,
   onUse,
 }: {
+  stretch: Stretch | null;
   timeZone: string;
   /** Tells apart several of them on one page, for the accessible name: "for setup 2". */
   what: string;
   onUse: (ends: Ends) => void;
 }) {
   const live = useLive();
-  const stretch = useBrushedStretch();
   if (!live) return null;
   const clock = (timeMs: number) => formatTime(timeMs, timeZone, "seconds");
   return (
