@@ -114,7 +114,9 @@ export function Timeline(props: TimelineProps) {
     (surface: Surface) => {
       const axis = axisOf(view, surface.width);
       drawStrips(surface, axis, strips, PLOT_HEIGHT + 4);
-      if (stretch !== null) drawBrush(surface, axis, stretch);
+      // Zoomed into, the stretch is all there is to see: a tint would only dull it.
+      const fills = stretch !== null && stretch.startMs <= view.startMs && stretch.endMs >= view.endMs;
+      if (stretch !== null && !fills) drawBrush(surface, axis, stretch);
     },
     [view, strips, stretch],
   );

@@ -14,15 +14,17 @@ const PAGE_MS = 30_000;
 export type ScrubberProps = {
   series: SpeedSeries;
   view: Stretch;
+  /** Where the session begins: the time "in" counts from here, also when a stretch is zoomed into. */
+  fromMs: number;
   cursor: TimeCursor;
   speedUnit: SpeedUnit;
   timeZone: string;
 };
 
 function textAt(props: ScrubberProps, timeMs: number): string {
-  const { series, view, speedUnit, timeZone } = props;
+  const { series, fromMs, speedUnit, timeZone } = props;
   const speed = series.speedMps[Math.round((timeMs - series.startMs) / series.stepMs)] ?? null;
-  const since = durationInWords((timeMs - view.startMs) / 1000);
+  const since = durationInWords(Math.max(0, timeMs - fromMs) / 1000);
   return `${formatTime(timeMs, timeZone, "seconds")}, ${since} in, ${speedWithUnit(speed, speedUnit)}`;
 }
 

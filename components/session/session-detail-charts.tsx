@@ -51,6 +51,12 @@ export function SessionDetailCharts(props: SessionDetailChartsProps) {
   const segments = useMemo(() => track.segments.filter((one) => overlaps(one, shown)), [track, shown]);
   const rides = useMemo(() => track.bumpRides.filter((one) => overlaps(one, shown)), [track, shown]);
   const lulls = useMemo(() => track.lulls.filter((one) => overlaps(one, shown)), [track, shown]);
+  const zoom = (zoomed: boolean) => {
+    // A cursor that is out of view would be lost.
+    const now = cursor.get() ?? shown.startMs;
+    if (zoomed) cursor.set(Math.min(shown.endMs, Math.max(shown.startMs, now)));
+    onZoom(zoomed);
+  };
   const tableKey = `${shown.startMs}-${shown.endMs}`;
   const table = {
     timeZone,
@@ -92,6 +98,7 @@ export function SessionDetailCharts(props: SessionDetailChartsProps) {
         <Scrubber
           series={track.series}
           view={view}
+          fromMs={track.window.startMs}
           cursor={cursor}
           speedUnit={units.speed}
           timeZone={timeZone}
@@ -104,7 +111,7 @@ export function SessionDetailCharts(props: SessionDetailChartsProps) {
           timeZone={timeZone}
           cursor={cursor}
           onStretch={onStretch}
-          onZoom={onZoom}
+          onZoom={zoom}
           onTouchBrushes={setTouchBrushes}
         />
         {stretch !== null && <StretchFigures figures={figures} discipline={data.discipline} units={units} />}
