@@ -9,6 +9,7 @@ import { confirmEmail } from "@/lib/server/accounts/confirm-email";
 import { requestPasswordReset } from "@/lib/server/accounts/request-password-reset";
 import { isResetLinkAlive, resetPassword } from "@/lib/server/accounts/reset-password";
 import { signIn } from "@/lib/server/accounts/sign-in";
+import { signUp } from "@/lib/server/accounts/sign-up";
 import { validateSignIn } from "@/lib/server/auth/sign-ins";
 import { letters, makeAccount, PASSWORD, signedIn, tokenIn } from "@/tests/support/accounts";
 import { openTestDatabase, testContext, TEST_NOW_MS } from "@/tests/support/test-database";
@@ -119,6 +120,28 @@ describe("requestPasswordReset and resetPassword", () => {
     expect(await requestPasswordReset(elsewhere, { email: "r20@riders.example" })).toBeUndefined();
   });
 
+  test("a stranger's sign-ups and guesses do not block the owner's way back in", async () => {
+    await makeAccount(db, { email: EMAIL });
+    const form = { email: EMAIL, password: "a long river runs", name: "Nobody", weight: "" };
+    for (let n = 0; n < 5; n += 1) await signUp(testContext(db), form);
+    await expect(signUp(testContext(db), form)).rejects.toMatchObject({ code: "limit_exceeded" });
+    const guess = () => signIn(testContext(db), { email: EMAIL, password: "guess" }, "Test");
+    for (let n = 0; n < 6; n += 1) await guess().catch(() => undefined);
+    await requestPasswordReset(testContext(db), { email: EMAIL });
+    const token = tokenIn(at(await letters(db), 5).body);
+    await resetPassword(testContext(db), { token, password: NEW_PASSWORD }, "Test");
+  });
+
+  test("whoever may ask for no more links has one that works", async () => {
+    await makeAccount(db, { email: EMAIL });
+    for (let n = 0; n < 5; n += 1) await requestPasswordReset(testContext(db), { email: EMAIL });
+    const lastMinute = testContext(db, { nowMs: TEST_NOW_MS + 59 * 60_000 });
+    await expect(requestPasswordReset(lastMinute, { email: EMAIL })).rejects.toMatchObject({
+      code: "limit_exceeded",
+    });
+    expect(await isResetLinkAlive(lastMinute, tokenIn(at(await letters(db), 4).body))).toBe(true);
+  });
+
   test("refuses an address that is none", async () => {
     await expect(requestPasswordReset(testContext(db), { email: "@" })).rejects.toMatchObject({
       code: "validation",
@@ -173,6 +196,16 @@ describe("changePassword", () => {
       });
     }
     await expect(changePassword(ctx, change(), "Test")).rejects.toMatchObject({ code: "limit_exceeded" });
+  });
+
+  test("is not slowed by a stranger who guesses at sign-in", async () => {
+    await makeAccount(db, { email: EMAIL });
+    const { ctx } = await signedIn(db, EMAIL);
+    const guess = () => signIn(testContext(db), { email: EMAIL, password: "guess" }, "Test");
+    for (let n = 0; n < 8; n += 1) await guess().catch(() => undefined);
+    await expect(guess()).rejects.toMatchObject({ code: "limit_exceeded" });
+    const { token } = await changePassword(ctx, change(), "Test");
+    expect(await isAlive(token)).toBe(true);
   });
 
   test("does not change somebody else's password, whatever is sent along", async () => {

@@ -12,9 +12,10 @@ import {
   forgetTurns,
   MAIL_PER_ADDRESS,
   MAIL_PER_RECIPIENT,
-  SIGN_IN_PER_ACCOUNT,
+  REAUTHENTICATION,
   takeTurn,
   tooSoon,
+  type ThrottleRule,
 } from "@/lib/server/throttle/throttle";
 
 export type UserRow = typeof user.$inferSelect;
@@ -121,10 +122,15 @@ export async function consumeEmailToken(
  *
  * @throws AppError `limit_exceeded` when there were too many.
  */
-export async function takeMailTurn(tx: Transaction, ctx: Context, email: string): Promise<void> {
+export async function takeMailTurn(
+  tx: Transaction,
+  ctx: Context,
+  email: string,
+  perRecipient: ThrottleRule = MAIL_PER_RECIPIENT,
+): Promise<void> {
   const waitMs = Math.max(
     await takeTurn(tx, MAIL_PER_ADDRESS, ctx.address, ctx.nowMs()),
-    await takeTurn(tx, MAIL_PER_RECIPIENT, email, ctx.nowMs()),
+    await takeTurn(tx, perRecipient, email, ctx.nowMs()),
   );
   if (waitMs > 0)
     throw tooSoon("Several messages were asked for already; look for them in the mailbox first.", waitMs);
@@ -132,7 +138,7 @@ export async function takeMailTurn(tx: Transaction, ctx: Context, email: string)
 
 /**
  * Checks the password of the person who is signed in, before a change that would let somebody else in. Guessing
- * is slowed as at sign-in.
+ * is slowed as at sign-in, by a count of its own.
  *
  * @throws AppError `validation` on the given field, `limit_exceeded` after too many wrong ones.
  */
@@ -141,7 +147,7 @@ export async function reauthenticate(
   row: UserRow,
   proof: { password: string; field: string },
 ): Promise<void> {
-  const waitMs = await ctx.db.write((tx) => takeTurn(tx, SIGN_IN_PER_ACCOUNT, row.email, ctx.nowMs()));
+  const waitMs = await ctx.db.write((tx) => takeTurn(tx, REAUTHENTICATION, row.id, ctx.nowMs()));
   if (waitMs > 0) throw tooSoon("Too many wrong passwords in a row.", waitMs);
   if (!(await verifyPassword(row.passwordHash, proof.password))) {
     logEvent("warn", "reauthentication_refused", { account: logId(row.email), requestId: ctx.requestId });
@@ -149,7 +155,7 @@ export async function reauthenticate(
       fields: { [proof.field]: "This is not your password of today." },
     });
   }
-  await ctx.db.write((tx) => forgetTurns(tx, SIGN_IN_PER_ACCOUNT, row.email));
+  await ctx.db.write((tx) => forgetTurns(tx, REAUTHENTICATION, row.id));
 }
 
 /** Removes links that are over. Gives back how many. */

@@ -5,6 +5,7 @@ import { logEvent } from "@/lib/server/context/log";
 import { env } from "@/lib/server/env/env";
 import { resetMessage } from "@/lib/server/mail/messages";
 import { queueMail } from "@/lib/server/mail/queue-mail";
+import { RESET_PER_RECIPIENT } from "@/lib/server/throttle/throttle";
 import { parseInput } from "@/lib/server/input/parse-input";
 import { findByEmail, issueEmailToken, logId, takeMailTurn } from "./internal";
 import { emailField } from "./schemas";
@@ -16,7 +17,7 @@ export async function requestPasswordReset(ctx: Context, input: unknown): Promis
   const { email } = parseInput(schema, input);
   const nowMs = ctx.nowMs();
   await ctx.db.write(async (tx) => {
-    await takeMailTurn(tx, ctx, email);
+    await takeMailTurn(tx, ctx, email, RESET_PER_RECIPIENT);
     const row = await findByEmail(tx, email);
     if (row === null) return;
     const token = await issueEmailToken(tx, { userId: row.id, purpose: "reset_password", email, nowMs });

@@ -37,9 +37,30 @@ export const SIGN_IN_PER_ADDRESS: ThrottleRule = {
   windowMs: 15 * MINUTE_MS,
   waitMaxMs: null,
 };
-/** Messages to one mailbox that a stranger can set off: resets, confirmations, sign-ups. */
+/**
+ * Wrong passwords of somebody who is signed in already. Counted apart from signing in, so that a stranger who guesses
+ * there cannot keep the owner from changing the password. Both together stay under the ceiling of 100 an hour.
+ */
+export const REAUTHENTICATION: ThrottleRule = {
+  name: "reauthentication",
+  free: 5,
+  windowMs: HOUR_MS,
+  waitMaxMs: 5 * MINUTE_MS,
+};
+/** Messages to one mailbox that a stranger can set off: confirmations, sign-ups. */
 export const MAIL_PER_RECIPIENT: ThrottleRule = {
   name: "mail_recipient",
+  free: 5,
+  windowMs: HOUR_MS,
+  waitMaxMs: null,
+};
+/**
+ * Links to set a new password, to one mailbox. Counted apart from other messages: a stranger who signs up again and
+ * again with somebody's address must not block the way back in. Whoever is refused here got a link within the hour
+ * that it lives, so the newest one still works.
+ */
+export const RESET_PER_RECIPIENT: ThrottleRule = {
+  name: "reset_recipient",
   free: 5,
   windowMs: HOUR_MS,
   waitMaxMs: null,
