@@ -162,6 +162,17 @@ test("a message goes through an SMTP server as plain text that asks for no autom
   expect(dialogue).toMatch(/^Content-Type: text\/plain; charset=utf-8\r?$/m);
 });
 
+test("a mail server that takes the call and then says nothing is given up", async () => {
+  const silent = createServer(() => undefined);
+  await new Promise<void>((resolve) => silent.listen(0, "127.0.0.1", resolve));
+  const { port } = silent.address() as AddressInfo;
+  const send = smtpSend(`smtp://127.0.0.1:${port}`, "Trimwake <no-reply@trimwake.example>", 300);
+  const began = performance.now();
+  await expect(send({ to: "aske@riders.example", subject: "s", text: "t" })).rejects.toThrow();
+  expect(performance.now() - began).toBeLessThan(5000);
+  silent.close();
+});
+
 test("every message is in plain words: no exclamation marks, no pleading, no apology", () => {
   const all = [
     messages.confirmMessage("https://trimwake.example", "t"),

@@ -6,8 +6,12 @@ import { sendDue, type Send } from "./send-due";
 const LOOK_EVERY_MS = 3000;
 
 /** Sends through the SMTP server at a URL; a server that hangs is given up after 20 s. */
-export function smtpSend(smtpUrl: string, from: string): Send {
-  const transport = createTransport(smtpUrl, { from });
+export function smtpSend(smtpUrl: string, from: string, patienceMs = 20_000): Send {
+  // Its own limits are minutes long, and one round waits for each message.
+  const transport = createTransport(
+    { url: smtpUrl, connectionTimeout: patienceMs, greetingTimeout: patienceMs, socketTimeout: patienceMs },
+    { from },
+  );
   return async ({ to, subject, text }) => {
     await transport.sendMail({
       from,
