@@ -14,6 +14,7 @@ import { upload } from "@/db/schema/upload";
 import { at } from "@/lib/errors/invariant";
 import { deleteSession, purgeDeletedSessions, restoreSession } from "@/lib/server/sessions/delete-session";
 import { storage } from "@/lib/server/storage/storage";
+import { PER_OWNER_MAX } from "@/lib/server/uploads/analyse-stored";
 import { importUpload } from "@/lib/server/uploads/import-upload";
 import { receiveUpload } from "@/lib/server/uploads/receive-upload";
 import { decodeSeries } from "@/lib/track/series-blob";
@@ -236,6 +237,19 @@ describe("importing an upload", () => {
   });
 });
 
+test("one rider's many files do not fill the pool for everybody", async () => {
+  const ids: string[] = [];
+  for (let n = 0; n <= PER_OWNER_MAX; n += 1) ids.push(await sendRide({ seed: 60 + n }, `${n}.gpx`));
+  const answers = await Promise.allSettled(
+    ids.map((uploadId) => importUpload(rider(), { uploadId, setupId: null })),
+  );
+  const refused = answers.filter((one) => one.status === "rejected");
+  expect(refused).toMatchObject([{ reason: { code: "limit_exceeded" } }]);
+  // What was refused is read when it is asked for again; nothing stays counted.
+  for (const uploadId of ids) await importUpload(rider(), { uploadId, setupId: null });
+  expect(await sessionsOf(riderId)).toHaveLength(PER_OWNER_MAX + 1);
+});
+
 describe("the purge of deleted sessions", () => {
   test("removes rows and raw bytes after 30 days, and only then", async () => {
     const uploadId = await sendRide({ seed: 31 });
@@ -255,5 +269,22 @@ describe("the purge of deleted sessions", () => {
         .where(and(eq(upload.id, uploadId))),
     ).toEqual([]);
     expect(await storage().has(sha256)).toBe(false);
+  });
+
+  test("spares a session that its rider brings back at the very moment", async () => {
+    const uploadId = await sendRide({ seed: 32 });
+    await importUpload(rider(), { uploadId, setupId: null });
+    const { id } = at(await sessionsOf(riderId), 0);
+    await deleteSession(rider(), id);
+    // The list of what is due is read, then the rider's write comes before the purge's own.
+    let restored = 0;
+    const write: Database["write"] = async (work) => {
+      if (restored === 0) await restoreSession(rider(), id);
+      restored += 1;
+      return db.write(work);
+    };
+    expect(await purgeDeletedSessions({ ...db, write }, TEST_NOW_MS + 31 * 86_400_000)).toBe(0);
+    expect(restored).toBeGreaterThan(0);
+    expect(await sessionsOf(riderId)).toMatchObject([{ id, deletedAtMs: null }]);
   });
 });

@@ -1,4 +1,4 @@
-import { and, eq } from "drizzle-orm";
+import { and, eq, lt } from "drizzle-orm";
 import { sessionOf, sessionsDeletedBefore } from "@/db/queries/session";
 import { session } from "@/db/schema/session";
 import { upload } from "@/db/schema/upload";
@@ -54,10 +54,17 @@ export async function restoreSession(ctx: Context, sessionId: string): Promise<v
  * Gives back how many sessions.
  */
 export async function purgeDeletedSessions(db: Database, nowMs: number): Promise<number> {
-  const due = await sessionsDeletedBefore(db.read, nowMs - RESTORE_DAYS * DAY_MS);
-  for (const { id, uploadId } of due) {
+  const beforeMs = nowMs - RESTORE_DAYS * DAY_MS;
+  let purged = 0;
+  for (const { id, uploadId } of await sessionsDeletedBefore(db.read, beforeMs)) {
     const sha256 = await db.write(async (tx) => {
-      await tx.delete(session).where(eq(session.id, id));
+      // Asked again inside the write: its rider may have brought it back since the list was read.
+      const gone = await tx
+        .delete(session)
+        .where(and(eq(session.id, id), lt(session.deletedAtMs, beforeMs)))
+        .returning({ id: session.id });
+      if (gone.length === 0) return [];
+      purged += 1;
       const left = await tx
         .select({ id: session.id })
         .from(session)
@@ -71,5 +78,5 @@ export async function purgeDeletedSessions(db: Database, nowMs: number): Promise
       sha256.map((row) => row.sha256),
     );
   }
-  return due.length;
+  return purged;
 }
