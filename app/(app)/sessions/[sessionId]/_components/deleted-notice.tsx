@@ -16,7 +16,7 @@ export function DeletedNotice({ session }: { session: SessionDetail }) {
       <PageHeader title={session.title} subtitle={formatLongDate(session.startMs, timeZone)} />
       <RestoreForm act={restoreSessionAction} sessionId={session.id}>
         It is out of your log and out of every comparison, and can be brought back until{" "}
-        {formatDate(untilMs, timeZone)}. After that it is gone with its file.
+        {formatDate(untilMs, timeZone)}. After that it is gone for good.
       </RestoreForm>
     </>
   );

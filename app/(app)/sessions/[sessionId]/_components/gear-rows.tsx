@@ -135,7 +135,6 @@ function GearRow(props: {
             <TextField
               name={fromName}
               label="From"
-              optional
               defaultValue={row.from}
               error={errorOf(fromName)}
               autoComplete="off"
@@ -143,7 +142,6 @@ function GearRow(props: {
             <TextField
               name={toName}
               label="To"
-              optional
               defaultValue={row.to}
               error={errorOf(toName)}
               autoComplete="off"
