@@ -1,7 +1,7 @@
 import type { Rng } from "@/lib/numeric/rng";
 import { near, STEP_S, type Form, type Mover } from "./motion";
 
-type Course = (elapsedS: number) => number;
+type Course = () => number;
 
 /** From hull speed through the take-off, pumping: four to eight seconds of rising speed. */
 export function takeOff(mover: Mover, form: Form, courseDeg: number, rng: Rng): void {
@@ -44,7 +44,7 @@ export function rideBumps(
       const from = speed;
       for (let s = 0; s < span && t < seconds; s += STEP_S, t += STEP_S) {
         speed = from + ((target - from) * (1 - Math.cos((Math.PI * s) / span))) / 2;
-        mover.step(speed, course(mover.elapsedS), 0.75);
+        mover.step(speed, course(), 0.75);
       }
     }
   }

@@ -3,6 +3,18 @@ import type { Rng } from "@/lib/numeric/rng";
 import { rideBumps, takeOff, touchDown } from "./flight";
 import { Mover, near, STEP_S, type Form, type Motion, type Position } from "./motion";
 
+/** A course that wanders about zero as a rider links bumps: slow swings with a memory of some seconds, degrees. */
+function wander(rng: Rng, sizeDeg: number, memoryS: number): () => number {
+  let swing = 0;
+  let drift = 0;
+  const keep = Math.exp(-STEP_S / memoryS);
+  return () => {
+    drift = keep * drift + sizeDeg * Math.sqrt(1 - keep * keep) * near(rng, 0, 1);
+    swing += ((drift - swing) * STEP_S) / 4;
+    return 1.6 * swing;
+  };
+}
+
 /** A run along the coast from one beach to another; `drive` puts a shuttle in front. */
 export function downwinder(options: {
   from: Position;
@@ -28,13 +40,13 @@ export function downwinder(options: {
     unevenMps: 0.2,
     load: 0.6,
   });
-  const weaveS = near(rng, 55, 8);
+  const swing = wander(rng, 16, near(rng, 14, 3));
   while (legs().distanceM > 250 && mover.elapsedS < 3 * 3600) {
     const line = legs();
     takeOff(mover, form, line.bearingDeg, rng);
     const wanted = Math.max(20, -form.steadinessS * Math.log(1 - rng()));
     const left = (line.distanceM - 150) / form.cruiseMps;
-    const course = (t: number) => legs().bearingDeg + 15 * Math.sin((2 * Math.PI * t) / weaveS);
+    const course = () => legs().bearingDeg + swing();
     const speed = rideBumps(mover, form, {
       seconds: Math.min(wanted, left),
       course,
@@ -63,13 +75,14 @@ export function wingSession(options: {
   const mover = new Mover(from, rng);
   mover.hold({ seconds: near(rng, 90, 15), speedMps: 0, courseDeg: 0, unevenMps: 0.02, load: 0.1 });
   mover.hold({ seconds: 30, speedMps: 1.2, courseDeg: windFromDeg + 100, unevenMps: 0.2, load: 0.5 });
+  const swing = wander(rng, 6, 9);
   let side = 1;
   let flying = false;
   while (mover.elapsedS < minutes * 60) {
     // Out reaches a little above the beam, back a little below, so that the rider comes home.
     const reach = windFromDeg + side * (side > 0 ? 86 : 94);
     if (!flying) takeOff(mover, form, reach, rng);
-    const course = (t: number) => reach + 4 * Math.sin(t / 7);
+    const course = () => reach + swing();
     const speed = rideBumps(mover, form, { seconds: near(rng, 70, 15), course, periodS: bumpPeriodS, rng });
     const kept = rng() < 0.7;
     for (let t = 0; t < 7; t += STEP_S) {

@@ -3,7 +3,6 @@ import { compassPoint } from "@/lib/display/format-bearing";
 import { formatNumber } from "@/lib/display/format-number";
 import { speedWithUnit } from "@/lib/display/format-speed";
 import { formatLongDate, formatTimeSpan } from "@/lib/display/format-time";
-import { describeMastPosition, describeShim } from "@/lib/gear/describe-setup";
 import type { listGearSpans, SetupWithUse } from "@/lib/server/gear/read-gear";
 import type { listPlaces } from "@/lib/server/places/list-places";
 import type { SessionDetail } from "@/lib/server/sessions/get-session";
@@ -48,13 +47,7 @@ export function sessionData(
     units: Units;
   },
 ): SessionData {
-  const setupById = new Map(rows.setups.map((setup) => [setup.id, setup]));
-  const label = (setupId: string): string => {
-    const setup = setupById.get(setupId);
-    if (setup === undefined) return "";
-    const adjustments = [describeMastPosition(setup.mastPositionMm), describeShim(setup.shimStackDeg)];
-    return [setup.name, ...adjustments.filter((words) => words !== null)].join(", ");
-  };
+  const names = new Map(rows.setups.map((setup) => [setup.id, setup.name]));
   return {
     id: session.id,
     title: session.title,
@@ -66,7 +59,7 @@ export function sessionData(
       setupId,
       startMs,
       endMs,
-      label: label(setupId),
+      label: names.get(setupId) ?? "",
     })),
     places: rows.places.map((place) => ({ name: place.name, lat: place.latDeg, lon: place.lonDeg })),
     windFromDeg: session.windFromDeg,
