@@ -1,5 +1,5 @@
 import { spawnSync } from "node:child_process";
-import { mkdtemp, readdir, rm } from "node:fs/promises";
+import { chmod, mkdtemp, readdir, rm, stat } from "node:fs/promises";
 import os from "node:os";
 import path from "node:path";
 import { afterEach, beforeEach, expect, test } from "vitest";
@@ -50,6 +50,27 @@ test.each([
   const next = run(`${START} ${DATABASE} ${SELECT} process.exit(0);`);
   expect(next.stderr).toBe("");
   expect(lastOf(next)).toEqual([{ name: "Aske" }]);
+});
+
+test("what a server writes is out of reach of the machine's other users", async () => {
+  const data = path.join(folder, "data");
+  const mode = async (name: string) => ((await stat(path.join(data, name))).mode & 0o777).toString(8);
+  expect(run(`${START} ${DATABASE} ${INSERT} process.kill(process.pid, "SIGKILL");`).stderr).toBe("");
+  expect(await mode(".")).toBe("700");
+  const names = (await readdir(data)).filter((name) => name.startsWith("trimwake.db"));
+  expect(names.length).toBeGreaterThan(1);
+  for (const name of names) expect(await mode(name), name).toBe("600");
+  // A file that an earlier version left open to all is closed at the next start.
+  await chmod(path.join(data, "trimwake.db"), 0o644);
+  expect(run(`${START} process.exit(0);`).status).toBe(0);
+  expect(await mode("trimwake.db")).toBe("600");
+});
+
+test("a server behind https that knows no proxy says what that costs", () => {
+  const settings = { APP_ORIGIN: "https://trimwake.example" };
+  expect(run(`${START} process.exit(0);`, settings).stdout).toContain('"event":"no_client_addresses"');
+  const told = run(`${START} process.exit(0);`, { ...settings, TRUSTED_PROXY_HOPS: "1" });
+  expect(told.stdout).not.toContain("no_client_addresses");
 });
 
 test("a server does not start with settings that cannot be used", async () => {

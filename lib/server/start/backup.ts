@@ -51,7 +51,7 @@ export async function backUpBeforeMigration(
   const pending = await pendingMigrations(db, place.root);
   if (pending === 0 || !(await isInUse(db))) return null;
   const folder = path.join(/* turbopackIgnore: true */ place.dataDir, "backups");
-  await mkdir(folder, { recursive: true });
+  await mkdir(folder, { recursive: true, mode: 0o700 });
   const stamp = new Date(place.nowMs).toISOString().replace(/[-:.]/g, "");
   const file = path.join(folder, `${PREFIX}${stamp}.db`);
   await db.client.execute({ sql: "VACUUM INTO ?", args: [file] });

@@ -1,4 +1,3 @@
-import { mkdir } from "node:fs/promises";
 import { prepareDatabase, type Database } from "@/db/client";
 import { migrateDatabase } from "@/db/migrate";
 import { database } from "@/lib/server/context/database";
@@ -8,6 +7,7 @@ import { smtpSend, startSender } from "@/lib/server/mail/sender";
 import { sweepOrphans } from "@/lib/server/uploads/sweep-files";
 import { backUpBeforeMigration } from "./backup";
 import { checkDatabase, freeDiskMb, probeWrite } from "./checks";
+import { keepPrivate } from "./private-files";
 import { startSweeping, sweep } from "./sweep";
 
 const holder = globalThis as typeof globalThis & { trimwakeStopTasks?: () => void };
@@ -20,7 +20,7 @@ const holder = globalThis as typeof globalThis & { trimwakeStopTasks?: () => voi
 export async function startUp(): Promise<void> {
   const settings = env();
   const { dataDir, databaseUrl } = settings;
-  await mkdir(dataDir, { recursive: true });
+  await keepPrivate(databaseUrl, dataDir);
   await probeWrite(dataDir);
   const db = database();
   await prepareDatabase(db, databaseUrl);
@@ -35,6 +35,11 @@ export async function startUp(): Promise<void> {
   closeAtTheEnd();
   const freeMb = await freeDiskMb(dataDir);
   if (freeMb < settings.minFreeDiskMb) logEvent("warn", "disk_nearly_full", { freeMb });
+  if (settings.origin.startsWith("https:") && settings.trustedProxyHops === 0) {
+    logEvent("warn", "no_client_addresses", {
+      why: "TRUSTED_PROXY_HOPS is 0 behind https: tries are counted by account only, not by where they come from",
+    });
+  }
   logEvent("info", "started", { demo: settings.demo, mode: settings.mode, sqlite: version, freeMb });
 }
 
