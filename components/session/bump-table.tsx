@@ -11,7 +11,7 @@ import { dateInputValue, isoWithOffset } from "@/lib/display/format-time";
 import { speedFromMps } from "@/lib/units/speed";
 import { CsvButton } from "./csv-button";
 import { RowButton } from "./row-button";
-import { ROWS_AT_ONCE, useCurrentRow, type StretchTableContext } from "./stretch-rows";
+import { ROWS_AT_ONCE, useRowMark, type StretchTableContext } from "./stretch-rows";
 
 const rounded = (value: number, decimals: number): number => Number(value.toFixed(decimals));
 const secondsOf = (one: { startMs: number; endMs: number }) => (one.endMs - one.startMs) / 1000;
@@ -38,12 +38,12 @@ function csvRows(rides: readonly BumpRide[], { timeZone, speedUnit }: StretchTab
   return [head, ...rows];
 }
 
-type RowProps = StretchTableContext & { ride: BumpRide; index: number; current: boolean };
+type RowProps = StretchTableContext & { ride: BumpRide; index: number };
 
 const BumpRow = memo(function BumpRow(props: RowProps) {
-  const { ride, index, current, timeZone, speedUnit, cursor, onSelect } = props;
+  const { ride, index, timeZone, speedUnit, cursor, onSelect } = props;
   return (
-    <Tr current={current}>
+    <Tr>
       <Td numeric className="text-muted">
         {index + 1}
       </Td>
@@ -68,7 +68,7 @@ const BumpRow = memo(function BumpRow(props: RowProps) {
 export function BumpTable(props: StretchTableContext & { bumpRides: readonly BumpRide[] }) {
   const { bumpRides, ...context } = props;
   const [shown, setShown] = useState(ROWS_AT_ONCE);
-  const current = useCurrentRow(context.cursor, bumpRides);
+  const body = useRowMark(context.cursor, bumpRides);
   const first = bumpRides[0];
   if (first === undefined) {
     return (
@@ -98,9 +98,9 @@ export function BumpTable(props: StretchTableContext & { bumpRides: readonly Bum
             </Th>
           </tr>
         </thead>
-        <tbody>
+        <tbody ref={body}>
           {bumpRides.slice(0, shown).map((ride, index) => (
-            <BumpRow key={ride.startMs} {...context} ride={ride} index={index} current={index === current} />
+            <BumpRow key={ride.startMs} {...context} ride={ride} index={index} />
           ))}
         </tbody>
       </Table>

@@ -15,7 +15,7 @@ import { distanceFromM } from "@/lib/units/length";
 import { speedFromMps } from "@/lib/units/speed";
 import { CsvButton } from "./csv-button";
 import { RowButton } from "./row-button";
-import { ROWS_AT_ONCE, useCurrentRow, type StretchTableContext } from "./stretch-rows";
+import { ROWS_AT_ONCE, useRowMark, type StretchTableContext } from "./stretch-rows";
 
 /** How sure the segment is, in words; the steps are ours. */
 function sureness(confidence: number): string {
@@ -58,12 +58,12 @@ function csvRows(
   return [head, ...rows];
 }
 
-type RowProps = StretchTableContext & { segment: OnFoilSegment; index: number; current: boolean };
+type RowProps = StretchTableContext & { segment: OnFoilSegment; index: number };
 
 const SegmentRow = memo(function SegmentRow(props: RowProps) {
-  const { segment, index, current, timeZone, speedUnit, distanceUnit, cursor, onSelect } = props;
+  const { segment, index, timeZone, speedUnit, distanceUnit, cursor, onSelect } = props;
   return (
-    <Tr current={current}>
+    <Tr>
       <Td numeric className="text-muted">
         {index + 1}
       </Td>
@@ -91,7 +91,7 @@ const SegmentRow = memo(function SegmentRow(props: RowProps) {
 export function SegmentTable(props: StretchTableContext & { segments: readonly OnFoilSegment[] }) {
   const { segments, ...context } = props;
   const [shown, setShown] = useState(ROWS_AT_ONCE);
-  const current = useCurrentRow(context.cursor, segments);
+  const body = useRowMark(context.cursor, segments);
   const first = segments[0];
   if (first === undefined) {
     return (
@@ -124,15 +124,9 @@ export function SegmentTable(props: StretchTableContext & { segments: readonly O
             <Th>On foil</Th>
           </tr>
         </thead>
-        <tbody>
+        <tbody ref={body}>
           {segments.slice(0, shown).map((segment, index) => (
-            <SegmentRow
-              key={segment.startMs}
-              {...context}
-              segment={segment}
-              index={index}
-              current={index === current}
-            />
+            <SegmentRow key={segment.startMs} {...context} segment={segment} index={index} />
           ))}
         </tbody>
       </Table>

@@ -1,6 +1,6 @@
 "use client";
 
-import { useMemo, useSyncExternalStore } from "react";
+import { useEffect, useRef, type RefObject } from "react";
 import type { TimeCursor } from "@/lib/display/time-cursor";
 import type { Stretch } from "@/lib/track/speed-series";
 import type { SpeedUnit } from "@/lib/units/speed";
@@ -35,27 +35,39 @@ export function stretchAt(stretches: readonly Stretch[], timeMs: number | null):
   return -1;
 }
 
-/** The row the cursor is in; a moving cursor draws the table anew only when the row changes, at most five times a second. */
-export function useCurrentRow(cursor: TimeCursor, stretches: readonly Stretch[]): number {
-  const subscribe = useMemo(
-    () => (changed: () => void) => {
-      let timer: ReturnType<typeof setTimeout> | null = null;
-      const stop = cursor.subscribe(() => {
-        timer ??= setTimeout(() => {
-          timer = null;
-          changed();
-        }, MARK_EVERY_MS);
-      });
-      return () => {
-        stop();
-        if (timer !== null) clearTimeout(timer);
-      };
-    },
-    [cursor],
-  );
-  return useSyncExternalStore(
-    subscribe,
-    () => stretchAt(stretches, cursor.get()),
-    () => -1,
-  );
+/**
+ * Marks the row of a table's body that the cursor is in, by hand: a moving cursor draws no table anew. The rows stand in
+ * the order of the stretches; a row that is not drawn is not marked.
+ */
+export function useRowMark(
+  cursor: TimeCursor,
+  stretches: readonly Stretch[],
+): RefObject<HTMLTableSectionElement | null> {
+  const body = useRef<HTMLTableSectionElement>(null);
+  useEffect(() => {
+    let timer: ReturnType<typeof setTimeout> | null = null;
+    let marked: Element | null = null;
+    const mark = (row: Element | null) => {
+      if (row === marked) return;
+      marked?.removeAttribute("aria-current");
+      marked?.classList.remove("bg-shell");
+      row?.setAttribute("aria-current", "true");
+      row?.classList.add("bg-shell");
+      marked = row;
+    };
+    const follow = () => {
+      timer = null;
+      mark(body.current?.children[stretchAt(stretches, cursor.get())] ?? null);
+    };
+    follow();
+    const stop = cursor.subscribe(() => {
+      timer ??= setTimeout(follow, MARK_EVERY_MS);
+    });
+    return () => {
+      stop();
+      if (timer !== null) clearTimeout(timer);
+      mark(null);
+    };
+  }, [cursor, stretches]);
+  return body;
 }
