@@ -16,7 +16,8 @@ export default defineConfig({
   workers: 1,
   retries: 0,
   forbidOnly: true,
-  reporter: [["list"], ["json"]],
+  // The count of passed and failed comes from the JSON; printed only when a file for it is named.
+  reporter: process.env.PLAYWRIGHT_JSON_OUTPUT_NAME === undefined ? [["list"]] : [["list"], ["json"]],
   use: {
     baseURL: `http://localhost:${port}`,
     trace: "retain-on-failure",
@@ -46,7 +47,7 @@ export default defineConfig({
     command: `node scripts/support/serve-empty.mjs`,
     url: `http://localhost:${port}/api/health`,
     timeout: 60_000,
-    reuseExistingServer: false,
+    reuseExistingServer: process.env.E2E_REUSE === "1",
     stdout: "ignore",
     stderr: "pipe",
     env: {

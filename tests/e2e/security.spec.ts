@@ -87,7 +87,7 @@ test("unknown and known addresses get the same words at sign-in", async ({ page 
     await page.goto("/sign-in");
     await page.getByLabel("E-mail address").fill(address);
     await page.getByLabel("Password", { exact: true }).fill(`${PASSWORD} not`);
-    await page.locator("main").getByRole("button", { name: "Sign in" }).click();
+    await page.locator("main").getByRole("button", { name: "Sign in", exact: true }).click();
     await expect(page.getByText("There is a problem")).toBeVisible();
     words.push(await page.getByRole("alert").first().innerText());
   }

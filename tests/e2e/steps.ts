@@ -49,7 +49,7 @@ export async function signIn(page: Page, email: string, password = PASSWORD): Pr
   if (new URL(page.url()).pathname === "/sign-in") {
     await page.getByLabel("E-mail address").fill(email);
     await page.getByLabel("Password", { exact: true }).fill(password);
-    await page.locator("main").getByRole("button", { name: "Sign in" }).click();
+    await page.locator("main").getByRole("button", { name: "Sign in", exact: true }).click();
   }
   await page.waitForURL("**/sessions");
   await expect(page.getByRole("heading", { level: 1 })).toHaveText("Sessions");
