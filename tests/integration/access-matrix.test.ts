@@ -321,6 +321,16 @@ describe("routes", () => {
   });
 });
 
+test("a page of one row can still be a 404 when the row is not there: nothing is sent before that is known", () => {
+  const waiting = filesUnder(["app"], (file) => file.endsWith("/loading.tsx")).map((file) =>
+    file.replace(/loading\.tsx$/, ""),
+  );
+  const pages = filesUnder(["app"], (file) => /\[.*\/page\.tsx$/.test(file));
+  expect(pages.length).toBeGreaterThan(2);
+  // With a loading.tsx above it a page begins to stream with status 200, and a stranger gets that.
+  expect(pages.filter((page) => waiting.some((folder) => page.startsWith(folder)))).toEqual([]);
+});
+
 describe("actions", () => {
   const files = filesUnder(["app", "components", "lib"], isSource).filter((file) =>
     /^\s*["']use server["'];/m.test(textOf(file)),
