@@ -2,7 +2,7 @@ import { DrizzleQueryError } from "drizzle-orm/errors";
 import { NextRequest } from "next/server";
 import { beforeEach, describe, expect, test, vi } from "vitest";
 import { AppError } from "@/lib/errors/app-error";
-import { describeError, formValues } from "@/lib/server/adapter/form-state";
+import { describeError, formAction, formValues } from "@/lib/server/adapter/form-state";
 import { clientAddress } from "@/lib/server/adapter/request-context";
 import { requireSameOrigin, routeResponse } from "@/lib/server/adapter/route-response";
 import { cookieAttributes } from "@/lib/server/auth/session-cookie";
@@ -190,6 +190,15 @@ describe("errors on their way out", () => {
     expect(answers).toEqual([404, 404]);
     expect(lines.map((line) => JSON.parse(line).event)).toEqual(["denied", "denied"]);
   });
+
+  test.each([null, undefined, 5, "text", ["a"], { get: "x" }])(
+    "an action that is given %j instead of a form says so and does nothing",
+    async (posted) => {
+      const work = vi.fn(async () => "done");
+      expect(await formAction(posted, work)).toMatchObject({ status: "error", fields: {}, values: {} });
+      expect(work).not.toHaveBeenCalled();
+    },
+  );
 
   test("a refused form gets its text back, and never its passwords, links or files", () => {
     const form = new FormData();

@@ -1,6 +1,6 @@
 "use server";
 
-import { redirect } from "next/navigation";
+import { notFound, redirect } from "next/navigation";
 import { revalidatePath } from "next/cache";
 import type { FormState } from "@/lib/display/form-state";
 import { parseDecimal } from "@/lib/display/parse-decimal";
@@ -88,6 +88,7 @@ export async function saveSetupAction(_: FormState, form: FormData): Promise<For
 
 /** Takes a part out of use (`retired` = 1) or back into it. */
 export async function retirePartAction(form: FormData): Promise<void> {
+  if (!(form instanceof FormData)) notFound();
   const retired = textOf(form, "retired") === "1";
   await pageRead("/quiver", async () => retirePart(await requestContext(), textOf(form, "partId"), retired));
   revalidatePath("/quiver");
@@ -96,6 +97,7 @@ export async function retirePartAction(form: FormData): Promise<void> {
 
 /** Takes a setup out of use (`retired` = 1) or back into it. */
 export async function retireSetupAction(form: FormData): Promise<void> {
+  if (!(form instanceof FormData)) notFound();
   const retired = textOf(form, "retired") === "1";
   await pageRead("/quiver", async () =>
     retireSetup(await requestContext(), textOf(form, "setupId"), retired),

@@ -24,7 +24,10 @@ export async function importFileAction(uploadId: string, setupId: string | null)
 }
 
 export async function restoreSessionAction(sessionId: string): Promise<Done> {
-  return done(async () => restoreSession(await requestContext(), sessionId));
+  return done(async () => {
+    const id = parseInput(z.string().max(40), sessionId);
+    await restoreSession(await requestContext(), id);
+  });
 }
 
 /** Tags sessions as ridden on one setup from end to end, or takes their tags off. */
@@ -51,6 +54,8 @@ async function done(work: () => Promise<unknown>): Promise<Done> {
 
 /** The page's form as a browser without JavaScript sends it: small files, stored and read at once. */
 export async function sendPlainAction(_: PlainUpload, form: FormData): Promise<PlainUpload> {
+  if (!(form instanceof FormData))
+    return { problem: "No file arrived. Choose one or more, then send.", files: [] };
   const sent = form.getAll("files").filter((one) => one instanceof File && one.name !== "") as File[];
   if (sent.length === 0) return { problem: "No file was chosen. Choose one or more, then send.", files: [] };
   if (sent.length > FILES_AT_ONCE_MAX) {

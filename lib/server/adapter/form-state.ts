@@ -42,8 +42,14 @@ function isDiskFull(error: unknown): boolean {
   return false;
 }
 
-/** Runs an action's work and turns what it throws into a form state; redirects pass through. */
-export async function formAction(form: FormData, work: () => Promise<string>): Promise<FormState> {
+const NOT_A_FORM = "The form did not arrive whole. Load the page again and send it once more.";
+
+/**
+ * Runs an action's work and turns what it throws into a form state; redirects pass through. What an action is given is
+ * whatever somebody posted to its address: only a form is let through to it.
+ */
+export async function formAction(form: unknown, work: () => Promise<string>): Promise<FormState> {
+  if (!(form instanceof FormData)) return { status: "error", message: NOT_A_FORM, fields: {}, values: {} };
   try {
     return { status: "ok", message: await work(), fields: {}, values: {} };
   } catch (error) {
