@@ -10,7 +10,7 @@ const phone = { viewport: { width: 360, height: 740 }, hasTouch: true, isMobile:
 export default defineConfig({
   testDir: "tests/e2e",
   outputDir: "test-results/e2e",
-  timeout: 90_000,
+  timeout: 240_000,
   expect: { timeout: 15_000 },
   fullyParallel: false,
   workers: 1,

@@ -79,7 +79,7 @@ export function BumpTable(props: StretchTableContext & { bumpRides: readonly Bum
   }
   return (
     <>
-      <Table caption="Bump rides">
+      <Table caption="Bump rides, one a row">
         <thead>
           <tr>
             <Th numeric>No.</Th>

@@ -36,7 +36,7 @@ export function LullTable(props: StretchTableContext & { lulls: readonly Lull[] 
   if (first === undefined) return <p className="rule-ink text-muted py-4">There is no lull in it.</p>;
   return (
     <>
-      <Table caption="Lulls">
+      <Table caption="Lulls, one a row">
         <thead>
           <tr>
             <Th>Start</Th>

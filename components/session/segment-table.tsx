@@ -102,7 +102,7 @@ export function SegmentTable(props: StretchTableContext & { segments: readonly O
   }
   return (
     <>
-      <Table caption="On-foil segments">
+      <Table caption="On-foil segments, one a row">
         <thead>
           <tr>
             <Th numeric>No.</Th>

@@ -37,7 +37,7 @@ test("the sign-in cookie is bound to the host, hidden from scripts, and dead aft
     .getByRole("button", { name: /Menu|Cookie Rider/ })
     .first()
     .click();
-  await page.getByRole("button", { name: "Sign out" }).first().click();
+  await page.locator("button:visible", { hasText: "Sign out" }).first().click();
   await page.waitForURL((url) => !url.pathname.startsWith("/sessions"));
   await context.clearCookies();
   await context.addCookies(before);
