@@ -2,9 +2,11 @@ import { afterAll, beforeAll, describe, expect, it } from "vitest";
 import { eq } from "drizzle-orm";
 import type { Database } from "@/db/client";
 import { auditLog } from "@/db/schema/audit-log";
+import { part } from "@/db/schema/part";
 import { sessionFigures } from "@/db/schema/session-figures";
-import { createPart, retirePart, updatePart } from "@/lib/server/gear/save-part";
-import { createSetup, retireSetup, updateSetup } from "@/lib/server/gear/save-setup";
+import { setup } from "@/db/schema/setup";
+import { createPart, PARTS_MAX, retirePart, updatePart } from "@/lib/server/gear/save-part";
+import { createSetup, retireSetup, SETUPS_MAX, updateSetup } from "@/lib/server/gear/save-setup";
 import { getPart, getSetup, lastUsedSetup, listParts, listSetups } from "@/lib/server/gear/read-gear";
 import { setGearSpans } from "@/lib/server/gear/set-gear-spans";
 import { FRONT_WING, makeSetup, REAR_WING } from "@/tests/support/gear-rows";
@@ -198,5 +200,36 @@ describe("gear spans", () => {
     const own = [{ setupId: id, startMs: null, endMs: null }];
     await expect(setGearSpans(stranger, made.id, own)).rejects.toMatchObject({ code: "not_found" });
     await expect(setGearSpans(anonymous, made.id, own)).rejects.toMatchObject({ code: "unauthenticated" });
+  });
+});
+
+describe("the quiver", () => {
+  it("takes 1000 parts and 1000 setups of one rider, and says why no more", async () => {
+    const collector = testContext(db, { userId: (await makeUser(db)).id });
+    const { wing, setup: first } = await makeSetup(collector);
+    const copies = Array.from({ length: PARTS_MAX - 1 }, (_, n) => n);
+    await db.write(async (tx) => {
+      await tx.insert(part).values(copies.map((n) => ({ ...wing, id: `part-${n}` })));
+      await tx.insert(setup).values(copies.map((n) => ({ ...first, id: `setup-${n}` })));
+    });
+    await expect(createPart(collector, FRONT_WING)).rejects.toMatchObject({ code: "limit_exceeded" });
+    expect(SETUPS_MAX).toBe(PARTS_MAX);
+    await expect(createSetup(collector, { name: "One more", frontWingId: wing.id })).rejects.toMatchObject({
+      code: "limit_exceeded",
+    });
+    // Other riders have room of their own.
+    await createPart(stranger, FRONT_WING);
+  });
+
+  it("keeps text as it was typed, and refuses what the database would cut short", async () => {
+    const model = "\u202e\u{1f3c4} 'x'); DROP TABLE part; --\r\n%00";
+    const odd = await createPart(rider, { ...FRONT_WING, model });
+    expect((await getPart(rider, odd.id)).model).toBe(model);
+    const cut = createPart(rider, { ...FRONT_WING, model: "Long-rail\u0000 850" });
+    await expect(cut).rejects.toMatchObject({ code: "validation", fields: { model: expect.any(String) } });
+    const inside = { ...FRONT_WING, dimensions: { areaM2: 0.09, spanM: 0.85, profile: "a\u0000" } };
+    await expect(createPart(rider, inside)).rejects.toMatchObject({
+      fields: { profile: expect.any(String) },
+    });
   });
 });

@@ -1,6 +1,6 @@
 import { and, eq } from "drizzle-orm";
 import { newId } from "@/db/new-id";
-import { partOf, type PartRow } from "@/db/queries/gear";
+import { partOf, partsOf, type PartRow } from "@/db/queries/gear";
 import { part } from "@/db/schema/part";
 import { AppError } from "@/lib/errors/app-error";
 import { partSchema } from "@/lib/gear/part-schema";
@@ -8,11 +8,21 @@ import { audit } from "@/lib/server/context/audit";
 import { requireUserId, type Context } from "@/lib/server/context/context";
 import { parseInput } from "@/lib/server/input/parse-input";
 
-/** Adds a part to the asker's quiver. One transaction with its audit row. */
+/** More than anybody owns, retired ones and all; every page that offers parts reads them whole. */
+export const PARTS_MAX = 1000;
+
+/**
+ * Adds a part to the asker's quiver. One transaction with its audit row.
+ *
+ * @throws AppError `validation`; `limit_exceeded` past 1000 parts.
+ */
 export async function createPart(ctx: Context, input: unknown): Promise<PartRow> {
   const ownerId = requireUserId(ctx);
   const value = parseInput(partSchema, input);
   return ctx.db.write(async (tx) => {
+    if ((await partsOf(tx, ownerId)).length >= PARTS_MAX) {
+      throw new AppError("limit_exceeded", `Your quiver holds ${PARTS_MAX} parts, the most there can be.`);
+    }
     const row = { id: newId(), ownerId, ...value, retiredAtMs: null, createdAtMs: ctx.nowMs() };
     await tx.insert(part).values(row);
     await audit(tx, ctx, { action: "part.create", subjectKind: "part", subjectId: row.id });

@@ -1,13 +1,16 @@
 import { and, eq } from "drizzle-orm";
 import type { Transaction } from "@/db/client";
 import { newId } from "@/db/new-id";
-import { partsOf, setupOf, type SetupRow } from "@/db/queries/gear";
+import { partsOf, setupOf, setupsOf, type SetupRow } from "@/db/queries/gear";
 import { setup } from "@/db/schema/setup";
 import { AppError } from "@/lib/errors/app-error";
 import { setupSchema, SETUP_PART_COLUMNS, type SetupInput } from "@/lib/gear/part-schema";
 import { audit } from "@/lib/server/context/audit";
 import { requireUserId, type Context } from "@/lib/server/context/context";
 import { parseInput } from "@/lib/server/input/parse-input";
+
+/** More than anybody rides, retired ones and all; every page that offers setups reads them whole. */
+export const SETUPS_MAX = 1000;
 
 const NOT_YOURS = "This setup is not in your quiver.";
 
@@ -28,7 +31,7 @@ async function requireOwnParts(tx: Transaction, ownerId: string, value: SetupInp
  * Adds a setup to the asker's quiver; `copiedFromId` remembers what it was made from.
  *
  * @throws AppError `validation` for a part that is not the asker's or of the wrong kind;
- *   `not_found` when the setup it is copied from is not the asker's.
+ *   `not_found` when the setup it is copied from is not the asker's; `limit_exceeded` past 1000 setups.
  */
 export async function createSetup(
   ctx: Context,
@@ -41,6 +44,9 @@ export async function createSetup(
     await requireOwnParts(tx, ownerId, value);
     if (copiedFromId !== null && (await setupOf(tx, ownerId, copiedFromId)) === undefined) {
       throw new AppError("not_found", NOT_YOURS);
+    }
+    if ((await setupsOf(tx, ownerId)).length >= SETUPS_MAX) {
+      throw new AppError("limit_exceeded", `Your quiver holds ${SETUPS_MAX} setups, the most there can be.`);
     }
     const row = { id: newId(), ownerId, ...value, copiedFromId, retiredAtMs: null, createdAtMs: ctx.nowMs() };
     await tx.insert(setup).values(row);
