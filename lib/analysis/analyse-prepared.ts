@@ -1,5 +1,6 @@
-import { median, quantile } from "@/lib/numeric/quantile";
+import { quantile } from "@/lib/numeric/quantile";
 import type { Fixes } from "@/lib/track/fixes";
+import { gapLimitS } from "@/lib/track/gap-limit";
 import type { PreparedTrack } from "@/lib/track/prepared-track";
 import type { SmoothedTrack } from "@/lib/track/smoothed-track";
 import { ANALYSIS_VERSION, type Analysis, type AnalysisOptions, type Discipline } from "./analysis";
@@ -14,10 +15,6 @@ import { cumulatedWayM, foilMask } from "./way";
 import { windFromBumps } from "./wind-from-bumps";
 import { windFromLegs } from "./wind-from-legs";
 
-/** A hole in the recording is a gap when it is longer than this (s) and than this many usual steps: metrics 2. */
-const GAP_S_MIN = 5;
-const GAP_STEPS_MIN = 4;
-
 /** A dropout is a hole longer than this (s) and than nearly all steps of the recording. Trials, no source. */
 const DROPOUT_S_MIN = 3.5;
 
@@ -29,10 +26,10 @@ function holeLimits(fixes: Fixes): HoleLimits {
   for (let i = 1; i < fixes.count; i += stride) {
     steps.push(((fixes.timeMs[i] ?? 0) - (fixes.timeMs[i - 1] ?? 0)) / 1000);
   }
-  if (steps.length === 0) return { gapLimitS: GAP_S_MIN, dropoutLimitS: DROPOUT_S_MIN };
-  const gapLimitS = Math.max(GAP_S_MIN, GAP_STEPS_MIN * median(steps));
+  const limitS = gapLimitS(fixes.timeMs);
+  if (steps.length === 0) return { gapLimitS: limitS, dropoutLimitS: DROPOUT_S_MIN };
   const dropoutLimitS = Math.max(DROPOUT_S_MIN, quantile(steps, 0.97) + 0.6);
-  return { gapLimitS, dropoutLimitS: Math.min(gapLimitS, dropoutLimitS) };
+  return { gapLimitS: limitS, dropoutLimitS: Math.min(limitS, dropoutLimitS) };
 }
 
 /** Wind by the rider's own courses, and for a wing the turns about it. */

@@ -132,7 +132,8 @@ const bestOverDistance = (key: string, name: string, limits: string): FigureDefi
 
 const SHORT =
   "The fastest of many noisy windows tends to be too fast: 70 % of the expected excess is taken off. Never across a dropout.";
-const LONG = "Never across a gap in the recording, never off the water.";
+const LONG =
+  "Never off the water, never across a gap in the recording; from 60 s and 500 m on, gaps of up to 15 s are passed over in a straight line.";
 
 const BESTS: readonly FigureDefinition[] = [
   bestOverTime(

@@ -24,16 +24,28 @@ const SWITCH_PENALTY = 5;
 const SPEED_WIDTH_MPS = 0.45;
 const ODDS_PER_S = 1.2;
 
+/** A standard error this many times the usual one means a disturbed receiver. */
+const DISTURBED_TIMES = 1.5;
+
 /** A hole in the recording longer than this (s) ends a segment; over a shorter one the net speed speaks. */
 const HOLE_S_MAX = 15;
 
-function evidence(track: SmoothedTrack, thresholdMps: number): Float32Array {
+/**
+ * How much a speed counts whose standard error is larger than usual: the width of the threshold is widened by it. Where the receiver was
+ * disturbed for some seconds the speeds before and after decide.
+ */
+function trustIn(seMps: number, usualSeMps: number): number {
+  const beyond = seMps ** 2 - (DISTURBED_TIMES * usualSeMps) ** 2;
+  return beyond > 0 ? SPEED_WIDTH_MPS ** 2 / (SPEED_WIDTH_MPS ** 2 + beyond) : 1;
+}
+
+function evidence(track: SmoothedTrack, thresholdMps: number, usualSeMps: number): Float32Array {
   const weight = (ODDS_PER_S * track.stepMs) / 1000;
   const odds = new Float32Array(track.count);
   for (let i = 0; i < track.count; i++) {
     const over = ((track.speedMps[i] ?? 0) - thresholdMps) / SPEED_WIDTH_MPS;
     let trust = (track.gapS[i] ?? 0) > 4 ? 0.3 : 1;
-    if ((track.speedSeMps[i] ?? 0) > 1.5) trust *= 0.2;
+    trust *= trustIn(track.speedSeMps[i] ?? 0, usualSeMps);
     const possible = track.onWater[i] === 1 && (track.gapS[i] ?? 0) <= HOLE_S_MAX;
     odds[i] = possible ? Math.max(-4, Math.min(3, over)) * weight * trust : -20 * weight;
   }
@@ -69,7 +81,7 @@ function adaptedPath(track: SmoothedTrack, options: AnalysisOptions): Path {
   const se = sampledSe(track);
   let stallMps = firstStallSpeed(options.minimumFlyingSpeedMps);
   for (let round = 0; ; round++) {
-    const oddsOn = twoStatePath(evidence(track, stallMps * THRESHOLD_OVER_STALL), SWITCH_PENALTY);
+    const oddsOn = twoStatePath(evidence(track, stallMps * THRESHOLD_OVER_STALL, se), SWITCH_PENALTY);
     const runs = runsOf(track.count, (i) => (oddsOn[i] ?? 0) > 0).filter(
       (run) => seconds(track, run) >= MIN_ON_FOIL_S,
     );

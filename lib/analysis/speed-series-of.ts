@@ -1,3 +1,4 @@
+import { median } from "@/lib/numeric/quantile";
 import {
   FLAG_DROPOUT,
   FLAG_GAP,
@@ -9,6 +10,18 @@ import type { SmoothedTrack } from "@/lib/track/smoothed-track";
 
 /** Slower than this there is no course worth showing (m/s). Common practice, no source. */
 const COURSE_MPS_MIN = 0.5;
+
+/** A speed is doubtful when its standard error is over this and over this many times the usual one (m/s). */
+const DOUBTFUL_MPS = 0.35;
+const DOUBTFUL_TIMES = 1.7;
+
+/** Standard error (m/s) above which a speed gives no short best: the receiver was disturbed there. */
+function doubtfulSeMps(track: SmoothedTrack, onFoil: ArrayLike<number>): number {
+  const stride = Math.max(1, Math.floor(track.count / 20_000));
+  const errors: number[] = [];
+  for (let i = 0; i < track.count; i += stride) if (onFoil[i] === 1) errors.push(track.speedSeMps[i] ?? 0);
+  return errors.length === 0 ? Infinity : Math.max(DOUBTFUL_MPS, DOUBTFUL_TIMES * median(errors));
+}
 
 /** How many fine samples make one sample of the series: a second, or the recording's own rate when faster. */
 function decimation(track: SmoothedTrack, rateHz: number): number {
@@ -52,6 +65,7 @@ export function speedSeriesOf(source: SeriesSource): SpeedSeries {
   const pick = (column: ArrayLike<number>) => (_: unknown, i: number) => column[offset + i * every] ?? 0;
   const shape = { length: count };
   const heart = track.heartRateBpm;
+  const doubtful = doubtfulSeMps(track, onFoil);
   const flags = new Uint8Array(count);
   const courseDeg = new Float32Array(count);
   for (let i = 0; i < count; i++) {
@@ -64,7 +78,8 @@ export function speedSeriesOf(source: SeriesSource): SpeedSeries {
     for (let k = fine; k < Math.min(track.count, fine + every); k++) {
       holeS = Math.max(holeS, track.gapS[k] ?? 0);
     }
-    const hole = holeS > gapLimitS ? FLAG_GAP : holeS > dropoutLimitS ? FLAG_DROPOUT : 0;
+    const unsure = holeS > dropoutLimitS || (track.speedSeMps[fine] ?? 0) > doubtful;
+    const hole = holeS > gapLimitS ? FLAG_GAP : unsure ? FLAG_DROPOUT : 0;
     const water = track.onWater[fine] === 1 ? FLAG_ON_WATER : 0;
     flags[i] = hole | water | (onFoil[fine] === 1 ? FLAG_ON_FOIL : 0);
   }

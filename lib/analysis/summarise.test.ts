@@ -37,7 +37,7 @@ describe("bestFigures", () => {
   const steady = seriesOf(Array.from({ length: 701 }, (_, i) => (i >= 100 && i < 200 ? 10 : 5)));
 
   it("is exact for a speed that is constant in pieces", () => {
-    const { bests } = bestFigures(steady, whole(steady), "A");
+    const { bests } = bestFigures(steady, whole(steady), { grade: "A" });
     expect(speedOf(bests.s2)).toBeCloseTo(10, 9);
     expect(speedOf(bests.s10)).toBeCloseTo(10, 9);
     expect(speedOf(bests.m500)).toBeCloseTo(10, 9);
@@ -47,58 +47,71 @@ describe("bestFigures", () => {
   });
 
   it("withholds windows under 5 s when the recording is graded below B", () => {
-    expect(speedOf(bestFigures(steady, whole(steady), "B").bests.s2)).toBeCloseTo(10, 9);
-    expect(speedOf(bestFigures(steady, whole(steady), "C").bests.s2)).toBe("quality");
-    expect(speedOf(bestFigures(steady, whole(steady), "C").bests.s10)).toBeCloseTo(10, 9);
+    expect(speedOf(bestFigures(steady, whole(steady), { grade: "B" }).bests.s2)).toBeCloseTo(10, 9);
+    expect(speedOf(bestFigures(steady, whole(steady), { grade: "C" }).bests.s2)).toBe("quality");
+    expect(speedOf(bestFigures(steady, whole(steady), { grade: "C" }).bests.s10)).toBeCloseTo(10, 9);
   });
 
   it("never takes a window across a gap or off the water", () => {
     const flags = Array.from({ length: 701 }, (_, i) => {
-      if (i === 150) return FLAG_GAP | FLAG_ON_WATER;
+      if (i >= 150 && i < 166) return FLAG_GAP | FLAG_ON_WATER;
       return i > 180 && i < 190 ? 0 : FLAG_ON_WATER;
     });
     const broken = seriesOf(Array.from(steady.speedMps), 0, flags);
-    const { bests } = bestFigures(broken, whole(broken), "A");
+    const { bests } = bestFigures(broken, whole(broken), { grade: "A" });
     // The longest unbroken fast piece is from 100 to 149 s: 490 m.
     expect(speedOf(bests.m250)).toBeCloseTo(10, 9);
     expect(speedOf(bests.m500)).toBeLessThan(10);
   });
 
+  it("passes over a gap of up to 15 s for 500 m and more, and never for less", () => {
+    const flags = Array.from({ length: 701 }, (_, i) =>
+      i >= 124 && i < 139 ? FLAG_GAP | FLAG_ON_WATER : FLAG_ON_WATER,
+    );
+    const broken = seriesOf(Array.from(steady.speedMps), 0, flags);
+    const { bests } = bestFigures(broken, whole(broken), { grade: "A" });
+    expect(speedOf(bests.m500)).toBeCloseTo(10, 9);
+    // The fast piece after the hole is 610 m and holds 250 m by itself.
+    const within = bests.m250;
+    expect("startMs" in within && within.startMs >= broken.startMs + 139_000).toBe(true);
+  });
+
   it("finds a 2 s best between the samples of a 1 Hz series", () => {
     // A smooth top at 50.5 s: the mean over 2 s of 9 - 0.2 (t - 50.5)^2 is 9 - 0.2 / 3 (closed form).
     const top = seriesOf(Array.from({ length: 101 }, (_, i) => Math.max(2, 9 - 0.2 * (i - 50.5) ** 2)));
-    const { bests } = bestFigures(top, whole(top), "A");
+    const { bests } = bestFigures(top, whole(top), { grade: "A" });
     // 0.01: straight pieces of a quarter of a second and 32-bit speeds.
     expect(speedOf(bests.s2)).toBeCloseTo(9 - 0.2 / 3, 2);
   });
 
   it("takes the expected excess off the maximum of many equal windows with noise, and none off a single one", () => {
     const level = seriesOf(new Array<number>(200).fill(8), 0.3);
-    const { bests } = bestFigures(level, whole(level), "A");
+    const { bests } = bestFigures(level, whole(level), { grade: "A" });
     expect(speedOf(bests.s2)).toBeLessThan(8 - 0.1);
     const peak = seriesOf(
       Array.from({ length: 200 }, (_, i) => (i >= 100 && i < 103 ? 10 : 5)),
       0.1,
     );
-    expect(speedOf(bestFigures(peak, whole(peak), "A").bests.s2)).toBeGreaterThan(9.9);
+    expect(speedOf(bestFigures(peak, whole(peak), { grade: "A" }).bests.s2)).toBeGreaterThan(9.9);
   });
 
   it("states a standard error that falls with the length of the window", () => {
     const noisy = seriesOf(new Array<number>(2000).fill(7), 0.3);
-    const { bests } = bestFigures(noisy, whole(noisy), "A");
+    const { bests } = bestFigures(noisy, whole(noisy), { grade: "A" });
     const errors = [bests.s2, bests.s10, bests.s60, bests.s600].map((best) =>
       "seMps" in best ? best.seMps : NaN,
     );
     expect([...errors].sort((a, b) => b - a)).toEqual(errors);
-    expect(errors[0]).toBeLessThan(0.3);
+    // 0.26 from the noise, 0.12 from the blunting of tops, 0.25 because this way is off the foil.
+    expect(errors[0]).toBeCloseTo(Math.hypot(0.26, 0.12, 0.25), 1);
   });
 
   it("gives the mean of five separate tens only when there are five", () => {
     const long = seriesOf(new Array<number>(120).fill(6));
-    expect(bestFigures(long, whole(long), "A").bestTensMeanMps).toBeCloseTo(6, 9);
+    expect(bestFigures(long, whole(long), { grade: "A" }).bestTensMeanMps).toBeCloseTo(6, 9);
     const short = seriesOf(new Array<number>(35).fill(6));
-    expect(bestFigures(short, whole(short), "A").bestTens).toHaveLength(3);
-    expect(bestFigures(short, whole(short), "A").bestTensMeanMps).toBeNull();
+    expect(bestFigures(short, whole(short), { grade: "A" }).bestTens).toHaveLength(3);
+    expect(bestFigures(short, whole(short), { grade: "A" }).bestTensMeanMps).toBeNull();
   });
 });
 
@@ -186,7 +199,7 @@ describe("summarise", () => {
     );
   });
 
-  it("is never faster in a part than in the whole (60 s and 500 m), and stays within the stretch", () => {
+  it("is no faster in a part than in the whole beyond the standard error (60 s and 500 m), and stays within the stretch", () => {
     const stretch = fc.tuple(fc.integer({ min: 0, max: 600_000 }), fc.integer({ min: 5_000, max: 660_000 }));
     fc.assert(
       fc.property(stretch, ([from, length]) => {
@@ -196,7 +209,10 @@ describe("summarise", () => {
         for (const key of ["s60", "m500"] as const) {
           const best = part.bests[key];
           if ("withheld" in best) continue;
-          expect(best.speedMps).toBeLessThanOrEqual(Number(speedOf(analysis.figures.bests[key])) + 1e-9);
+          // The excess taken off a maximum is less with fewer rivals: a part may show more by some of its standard error.
+          expect(best.speedMps).toBeLessThanOrEqual(
+            Number(speedOf(analysis.figures.bests[key])) + best.seMps,
+          );
           expect(best.startMs).toBeGreaterThanOrEqual(startMs);
           expect(best.endMs).toBeLessThanOrEqual(endMs);
         }

@@ -4,7 +4,7 @@ import { FLAG_GAP, FLAG_ON_WATER, type SpeedSeries, type Stretch } from "@/lib/t
 import type { AnalysedTrack, BumpFigures, BumpRide, Figures, Lull, OnFoilSegment } from "./analysis";
 import { bestFigures } from "./bests";
 import { glideFigures } from "./glide";
-import { meanSpeedSe } from "./mean-speed-se";
+import { filteredShareSe, isFiltered, meanSpeedSe } from "./mean-speed-se";
 import { lastNotAbove, valueAt } from "./value-at";
 
 /** Slower than this nobody is under way (m/s). Common practice, no source. */
@@ -13,7 +13,7 @@ export const MOVING_MPS_MIN = 0.5;
  * What the smoother's own standard error does not hold of a long way: waves' to-and-fro, edges of the time on the
  * water. Share of the way; found on modelled sessions, no published source.
  */
-const WAY_SHARE_SE = 0.008;
+const WAY_SHARE_SE = 0.011;
 const GLIDE_SEED = 20250614;
 
 const timeS = (stretch: Stretch): number => (stretch.endMs - stretch.startMs) / 1000;
@@ -138,6 +138,8 @@ export function summarise(track: AnalysedTrack, stretch: Stretch): Figures {
   const elapsedS = Math.max(0, timeS(stretch));
   const waterDistanceM = wayAt(series, stretch.endMs) - wayAt(series, stretch.startMs);
   const moving = movingS(series, stretch);
+  const filtered = isFiltered(track.quality);
+  const shareSe = filtered ? Math.hypot(WAY_SHARE_SE, filteredShareSe(Math.max(elapsedS, 1))) : WAY_SHARE_SE;
   const randomSe = series.count > 0 ? meanSpeedSe(series, stretch) * elapsedS : 0;
   return {
     startMs: stretch.startMs,
@@ -145,11 +147,11 @@ export function summarise(track: AnalysedTrack, stretch: Stretch): Figures {
     elapsedS,
     movingS: moving,
     waterDistanceM,
-    waterDistanceSeM: Math.hypot(randomSe, WAY_SHARE_SE * waterDistanceM),
+    waterDistanceSeM: Math.hypot(randomSe, shareSe * waterDistanceM),
     ...foil,
     onFoilShareOfDistance: waterDistanceM > 0 ? Math.min(1, foil.onFoilDistanceM / waterDistanceM) : 0,
     onFoilShareOfTime: elapsedS > 0 ? Math.min(1, foil.onFoilTimeS / elapsedS) : 0,
-    ...bestFigures(series, stretch, track.quality.grade),
+    ...bestFigures(series, stretch, { grade: track.quality.grade, filtered }),
     bumps: bumpFigures({ track, rides, lulls, foil }),
     glide: glideFigures(lulls, seededRng(GLIDE_SEED)),
   };

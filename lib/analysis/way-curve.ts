@@ -12,8 +12,16 @@ export type WayCurve = {
   readonly runs: readonly Run[];
 };
 
-/** Runs of samples first ... last on the water without any of the breaks. */
-function usableRuns(flags: Uint8Array, first: number, last: number, breaks: number): Run[] {
+/** Samples first ... last of a series, the flags that end a run, and the longest hole (samples) passed over. */
+type Usable = {
+  readonly first: number;
+  readonly last: number;
+  readonly breaks: number;
+  readonly bridged: number;
+};
+
+/** Runs of samples on the water without any of the breaks but short holes between usable ones. */
+function usableRuns(flags: Uint8Array, { first, last, breaks, bridged }: Usable): Run[] {
   const found: Run[] = [];
   let from = -1;
   for (let i = first; i <= last + 1; i++) {
@@ -24,17 +32,36 @@ function usableRuns(flags: Uint8Array, first: number, last: number, breaks: numb
       from = -1;
     }
   }
-  return found;
+  return bridged > 0 ? joinAcrossHoles(found, flags, bridged) : found;
+}
+
+function joinAcrossHoles(runs: readonly Run[], flags: Uint8Array, bridged: number): Run[] {
+  const joined: Run[] = [];
+  for (const run of runs) {
+    const last = joined.at(-1);
+    const hole = last ? flags.subarray(last.to + 1, run.from) : null;
+    if (last && hole && hole.length <= bridged && hole.every((f) => (f & FLAG_ON_WATER) !== 0))
+      joined[joined.length - 1] = { from: last.from, to: run.to };
+    else joined.push(run);
+  }
+  return joined;
 }
 
 /**
  * The curve of a series inside a stretch, knots at its samples: times on the water without a gap (`breaks`:
- * the flags that end a run). The ends of the stretch are taken inwards to whole samples.
+ * the flags that end a run), but for holes of at most `bridgedS` seconds. The ends of the stretch are taken inwards
+ * to whole samples.
  */
-export function wayCurveOf(series: SpeedSeries, stretch: Stretch, breaks: number = FLAG_GAP): WayCurve {
+export function wayCurveOf(
+  series: SpeedSeries,
+  stretch: Stretch,
+  options: { readonly breaks?: number; readonly bridgedS?: number } = {},
+): WayCurve {
   const first = Math.max(0, Math.ceil((stretch.startMs - series.startMs) / series.stepMs));
   const last = Math.min(series.count - 1, Math.floor((stretch.endMs - series.startMs) / series.stepMs));
-  const runs = usableRuns(series.flags, first, last, breaks);
+  const { breaks = FLAG_GAP, bridgedS = 0 } = options;
+  const bridged = Math.floor((bridgedS * 1000) / series.stepMs);
+  const runs = usableRuns(series.flags, { first, last, breaks, bridged });
   return { startMs: series.startMs, stepMs: series.stepMs, wayM: series.distanceM, runs };
 }
 

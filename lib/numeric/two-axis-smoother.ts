@@ -9,12 +9,16 @@ import {
 } from "./covariance-steps";
 import { TERM, type TransitionTerms } from "./transition-terms";
 
-/** Nodes of a piece of track. A NaN `xM` marks a node without a position, a NaN `velocityVariance` one without a velocity. */
+/**
+ * Nodes of a piece of track. A NaN `xM` marks a node without a position, a NaN `velocityVariance` one without a velocity;
+ * `extraVariance` (m2) is what a doubtful position has beyond the usual white variance.
+ */
 export type SmootherNodes = {
   count: number;
   readonly timeS: Float64Array;
   readonly xM: Float64Array;
   readonly yM: Float64Array;
+  readonly extraVariance: Float64Array;
   readonly vxMps: Float64Array;
   readonly vyMps: Float64Array;
   readonly velocityVariance: Float64Array;
@@ -56,6 +60,7 @@ export function makeSmootherNodes(capacity: number): SmootherNodes {
     timeS: column(capacity),
     xM: column(capacity),
     yM: column(capacity),
+    extraVariance: column(capacity),
     vxMps: column(capacity),
     vyMps: column(capacity),
     velocityVariance: column(capacity),
@@ -187,7 +192,12 @@ export class TwoAxisSmoother {
     h[2] = (p[2] as number) + (p[10] as number) + (p[11] as number);
     h[3] = (p[3] as number) + (p[12] as number) + (p[13] as number);
     h[4] = (p[4] as number) + (p[13] as number) + (p[14] as number);
-    const s = (h[0] as number) + (h[3] as number) + (h[4] as number) + this.positionNoise;
+    const s =
+      (h[0] as number) +
+      (h[3] as number) +
+      (h[4] as number) +
+      this.positionNoise +
+      (nodes.extraVariance[i] as number);
     const ex = zx - (x[0] as number) - (x[3] as number) - (x[4] as number);
     const ey = (nodes.yM[i] as number) - (x[5] as number) - (x[8] as number) - (x[9] as number);
     this.update({ i, which: 0, s, ex, ey });

@@ -78,7 +78,7 @@ describe("cleaning", () => {
     lon[3] = NaN;
     time[4] = NaN;
     [time[50], time[51]] = [time[51] ?? NaN, time[50] ?? NaN];
-    time[60] = time[61] ?? NaN;
+    time[61] = (time[60] ?? NaN) + 1;
     time[200] = Date.UTC(2099, 0, 1);
     const cleaned = cleanFixes({ ...raw, timeMs: time, latDeg: lat, lonDeg: lon });
     expect(countOf(cleaned, "impossible")).toBe(5);

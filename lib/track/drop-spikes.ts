@@ -67,6 +67,31 @@ function departure(search: Search, i: number, before: Velocity): number {
   return off > allowed ? off : NaN;
 }
 
+/**
+ * Distance (m) of a way from one that goes at one velocity first and at the other after, half the time each or, about a single fix left
+ * out, turning whenever fits best.
+ */
+function missOf(
+  east: number,
+  north: number,
+  way: {
+    readonly before: Velocity;
+    readonly after: Velocity;
+    readonly dt: number;
+    readonly freely: boolean;
+  },
+): number {
+  const { before, after, dt } = way;
+  const dx = (after.east - before.east) * dt;
+  const dy = (after.north - before.north) * dt;
+  const offX = east - before.east * dt;
+  const offY = north - before.north * dt;
+  const square = dx * dx + dy * dy;
+  const turned = square > 0 ? Math.max(0, Math.min(1, (offX * dx + offY * dy) / square)) : 0;
+  const share = way.freely ? turned : 0.5;
+  return Math.hypot(offX - share * dx, offY - share * dy);
+}
+
 type Search = {
   readonly path: TimedPlane;
   readonly medianStepS: number;
@@ -95,9 +120,16 @@ function blockEnd(search: Search, i: number, before: Velocity, jumpM: number): n
     const backM = Math.hypot(stepX - after.east * lastS, stepY - after.north * lastS);
     if (backM < 6) continue;
     const dt = (timeS[j] as number) - (timeS[i - 1] as number);
-    const aheadX = (xM[i - 1] as number) + 0.5 * (before.east + after.east) * dt;
-    const aheadY = (yM[i - 1] as number) + 0.5 * (before.north + after.north) * dt;
-    const missM = Math.hypot((xM[j] as number) - aheadX, (yM[j] as number) - aheadY);
+    const missM = missOf(
+      (xM[j] as number) - (xM[i - 1] as number),
+      (yM[j] as number) - (yM[i - 1] as number),
+      {
+        before,
+        after,
+        dt,
+        freely: j === i + 1,
+      },
+    );
     const size = Math.max(jumpM, backM);
     const slack = Math.max(6, Math.min(0.35 * size, 40)) + (dt > 12 ? 6 : 1.2) * dt;
     if (missM < slack && missM < 0.6 * size) return j;

@@ -1,6 +1,7 @@
 import { distanceM } from "@/lib/geo/distance-m";
 import { wrapLongitudeDeg } from "@/lib/geo/longitude";
 
+import { evenWholeSeconds } from "./even-whole-seconds";
 import { type FixDraft, pickFixes } from "./fix-draft";
 
 /** Fixes closer in time than this are one fix: no receiver of the trade records faster than 25 Hz (common practice, no source). */
@@ -13,7 +14,7 @@ export type OrderedFixes = { readonly draft: FixDraft; readonly reordered: numbe
 
 /**
  * Step 2 of the cleaning: time order, and one fix an instant. Fixes of one instant (within 20 ms) become their mean place; if they are
- * more than 20 m apart, the first one stays. The order of fixes with equal times is that of the file.
+ * more than 20 m apart, the first one stays. Whole seconds written twice beside a missing one are evened out first. The order of fixes with equal times is that of the file.
  *
  * @example
  * orderFixes({ count: 2, timeMs: Float64Array.of(2000, 1000), latDeg: Float64Array.of(1, 2), lonDeg: Float64Array.of(0, 0), source: Uint32Array.of(0, 1) }).reordered; // 1
@@ -27,7 +28,7 @@ export function orderFixes(draft: FixDraft): OrderedFixes {
     else latest = time;
   }
   const sorted = reordered > 0 ? pickFixes(draft, timeOrder(draft)) : draft;
-  const mergedDraft = mergeInstants(sorted);
+  const mergedDraft = mergeInstants(evenWholeSeconds(sorted));
   return { draft: mergedDraft, reordered, merged: sorted.count - mergedDraft.count };
 }
 

@@ -1,11 +1,12 @@
 import type { CleanedFixes } from "./clean-fixes";
+import { gapLimitS } from "./gap-limit";
 import type { QualityGrade, QualityReport } from "./quality";
 import type { Smoothing } from "./smooth-track";
 
-/** Gaps longer than max(5 s, 4 x the usual step) count; ones beyond ten minutes are breaks in the recording. */
-const GAP_S = 5;
-const GAP_STEPS = 4;
+/** Gaps beyond ten minutes are breaks in the recording. */
 const BREAK_S = 600;
+/** Noisier positions keep the grade from B. */
+const NOISE_M_B = 2.6;
 
 /** Number of gaps, and the share of the recorded time that lies in them. */
 export type Gaps = {
@@ -16,14 +17,14 @@ export type Gaps = {
 };
 
 /**
- * Gaps of a track whose times rise: steps longer than max(5 s, 4 x `medianStepS`). Steps beyond ten minutes are breaks, neither gap nor
+ * Gaps of a track whose times rise: see `gapLimitS`. Steps beyond ten minutes are breaks, neither gap nor
  * recorded time. No fixes give zeros.
  *
  * @example
- * findGaps(Float64Array.of(0, 1000, 9000, 10000), 1).count; // 1
+ * findGaps(Float64Array.of(0, 1000, 9000, 10000)).count; // 1
  */
-export function findGaps(timeMs: Float64Array, medianStepS: number): Gaps {
-  const limitS = Math.max(GAP_S, GAP_STEPS * (Number.isFinite(medianStepS) ? medianStepS : 0));
+export function findGaps(timeMs: Float64Array): Gaps {
+  const limitS = gapLimitS(timeMs);
   let count = 0;
   let breaks = 0;
   let gapS = 0;
@@ -67,7 +68,7 @@ export function qualityReport(
   fixesRead: number,
 ): QualityReport {
   const kept = cleaned.fixes.count;
-  const gaps = findGaps(cleaned.fixes.timeMs, cleaned.medianStepS);
+  const gaps = findGaps(cleaned.fixes.timeMs);
   const activeS = gaps.recordedS * (1 - gaps.share);
   const rateHz = activeS > 0 ? (kept - 1 - gaps.count - gaps.breaks) / activeS : 0;
   const dropped = fixesRead > 0 ? (fixesRead - kept) / fixesRead : 1;
@@ -84,8 +85,9 @@ export function qualityReport(
       reason: `${percent(gaps.share)} of the time lies in gaps.`,
     },
     {
-      value: noiseM,
-      limits: [1.3, 2.6, 4.5],
+      // Speeds from the receiver itself do not suffer from its positions.
+      value: smoothing.receiverSpeed === "used" ? Math.min(noiseM, NOISE_M_B) : noiseM,
+      limits: [1.3, NOISE_M_B, 4.5],
       reason: `The positions are noisy: about ${noiseM.toFixed(1)} m.`,
     },
     { value: dropped, limits: [0.02, 0.06, 0.25], reason: `${percent(dropped)} of the fixes were dropped.` },

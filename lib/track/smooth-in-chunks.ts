@@ -43,13 +43,15 @@ const SPEED_PRIOR_VARIANCE = 100;
  * passed over. What `visit` receives is overwritten by the next piece.
  *
  * @example
- * smoothInChunks({ path: { count: 0, timeS: new Float64Array(0), xM: new Float64Array(0), yM: new Float64Array(0) }, runs: [], velocity: null }, { agility: { sd: 1, timeS: 1 }, noiseScaleM: 1, roundingM2: 0 }, () => 0); // undefined
+ * smoothInChunks({ path: { count: 0, timeS: new Float64Array(0), xM: new Float64Array(0), yM: new Float64Array(0) }, runs: [], velocity: null, doubtM2: null }, { agility: { sd: 1, timeS: 1 }, noiseScaleM: 1, extraWhiteM2: 0 }, () => 0); // undefined
  */
 export function smoothInChunks(
   input: {
     readonly path: TimedPlane;
     readonly runs: readonly FixRun[];
     readonly velocity: MeasuredVelocity | null;
+    /** Extra variance of each fix's position (m2), or null when all are as good as usual. */
+    readonly doubtM2: Float64Array | null;
   },
   settings: SmootherSettings,
   visit: (chunk: SmoothedChunk) => void,
@@ -57,7 +59,7 @@ export function smoothInChunks(
   const smoother = new TwoAxisSmoother({
     capacity: CAPACITY,
     terms: rememberTerms(settingsTerms(settings)),
-    positionVariance: whiteVarianceM2(settings.noiseScaleM, settings.roundingM2),
+    positionVariance: whiteVarianceM2(settings.noiseScaleM, settings.extraWhiteM2),
   });
   const nodes = makeSmootherNodes(CAPACITY);
   const fixOf = new Int32Array(CAPACITY);
@@ -91,7 +93,11 @@ function priorAt(path: TimedPlane, fix: number, settings: SmootherSettings) {
   };
 }
 
-type Input = { readonly path: TimedPlane; readonly velocity: MeasuredVelocity | null };
+type Input = {
+  readonly path: TimedPlane;
+  readonly velocity: MeasuredVelocity | null;
+  readonly doubtM2: Float64Array | null;
+};
 
 /** Fills `nodes` from fix `from` on; returns the index of the last node that belongs to the piece, which is at a fix. */
 function loadNodes(input: Input, run: FixRun, nodes: SmootherNodes, fixOf: Int32Array): number {
@@ -105,6 +111,7 @@ function loadNodes(input: Input, run: FixRun, nodes: SmootherNodes, fixOf: Int32
     nodes.timeS[k] = timeS[i] as number;
     nodes.xM[k] = xM[i] as number;
     nodes.yM[k] = yM[i] as number;
+    nodes.extraVariance[k] = input.doubtM2 ? (input.doubtM2[i] as number) : 0;
     nodes.vxMps[k] = input.velocity ? (input.velocity.vxMps[i] as number) : NaN;
     nodes.vyMps[k] = input.velocity ? (input.velocity.vyMps[i] as number) : NaN;
     nodes.velocityVariance[k] = input.velocity ? (input.velocity.variance[i] as number) : NaN;
@@ -124,6 +131,7 @@ function addNodesBetween(nodes: SmootherNodes, fixOf: Int32Array, t0: number, t1
     nodes.timeS[k] = t0 + ((t1 - t0) * p) / parts;
     nodes.xM[k] = NaN;
     nodes.yM[k] = NaN;
+    nodes.extraVariance[k] = 0;
     nodes.velocityVariance[k] = NaN;
   }
 }

@@ -9,6 +9,7 @@ import {
   type PlaneClock,
   type RunEnds,
 } from "./fill-columns";
+import { burstVarianceM2 } from "./find-bursts";
 import { findRuns } from "./find-runs";
 import type { Fixes } from "./fixes";
 import { heartRateOnClock } from "./heart-rate-on-clock";
@@ -21,6 +22,7 @@ import { type Agility, LOOSE, type SmootherSettings, STIFF } from "./smoother-se
 import type { SmoothedTrack } from "./smoothed-track";
 import { gateStationary } from "./stationary-gate";
 import { uniformClock } from "./uniform-clock";
+import { splitWhite } from "./white-noise";
 
 /** Holes shorter than this are usual dropped seconds and not marked. */
 const MARKED_HOLE_S = 3;
@@ -29,7 +31,7 @@ const NEAR_FIX_S = 0.3;
 /** Below this speed the noise term of a mean speed is no longer a small correction. */
 const NOISE_TERM_MPS = 2;
 /** Between distant fixes the model allows more weaving than anybody does; no more than this (m2/s2) is believed. */
-const NOISE_TERM_VARIANCE_MAX = 0.35;
+const NOISE_TERM_VARIANCE_MAX = 0.18;
 
 /** A smoothed track, not yet told from the land, with what the smoothing found out about the receiver. */
 export type Smoothing = {
@@ -43,7 +45,8 @@ type Work = {
   readonly path: TimedPlane;
   readonly runs: readonly FixRun[];
   readonly scale: number;
-  readonly roundingM2: number;
+  readonly extraWhiteM2: number;
+  readonly doubtM2: Float64Array | null;
   readonly velocity: MeasuredVelocity | null;
 };
 
@@ -63,8 +66,19 @@ export function smoothTrack(fixes: Fixes, medianStepS: number): Smoothing {
     timeS: Float64Array.from(fixes.timeMs, (t) => (t - firstMs) / 1000),
   };
   const roundingM2 = roundingVarianceM2(fixes);
-  const scale = noiseScaleM(path, medianStepS, roundingM2);
-  const bare: Work = { fixes, path, runs: findRuns(path, medianStepS), scale, roundingM2, velocity: null };
+  const noise = splitWhite(path, medianStepS, noiseScaleM(path, medianStepS, roundingM2));
+  // Rounding is part of what is found white.
+  const extraWhiteM2 = Math.max(noise.whiteM2, roundingM2);
+  const bare: Work = {
+    fixes,
+    path,
+    runs: findRuns(path, medianStepS),
+    scale: noise.scaleM,
+    extraWhiteM2,
+    doubtM2: burstVarianceM2(path, medianStepS),
+    velocity: null,
+  };
+  const scale = Math.hypot(noise.scaleM, Math.sqrt(noise.whiteM2));
   const receiver = measuredVelocity(bare);
   const work = { ...bare, velocity: receiver.velocity };
   const clock = uniformClock(firstMs, fixes.timeMs[fixes.count - 1] ?? NaN, medianStepS);
@@ -85,7 +99,7 @@ export function smoothTrack(fixes: Fixes, medianStepS: number): Smoothing {
 }
 
 function settings(work: Work, agility: Agility): SmootherSettings {
-  return { agility, noiseScaleM: work.scale, roundingM2: work.roundingM2 };
+  return { agility, noiseScaleM: work.scale, extraWhiteM2: work.extraWhiteM2 };
 }
 
 function emptyColumns(count: number): FineColumns {

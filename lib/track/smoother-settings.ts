@@ -27,15 +27,15 @@ export const LOOSE: Agility = { sd: 1.3, timeS: 1.5 };
 export type SmootherSettings = {
   readonly agility: Agility;
   readonly noiseScaleM: number;
-  /** Variance from the rounding of coordinates in the file, m2. */
-  readonly roundingM2: number;
+  /** White variance beyond the usual shape, m2: rounding of coordinates in the file, a receiver whose noise is nearly white. */
+  readonly extraWhiteM2: number;
 };
 
 /**
  * The Singer model with both correlated errors for a setting.
  *
  * @example
- * singerModel({ agility: { sd: 1, timeS: 2 }, noiseScaleM: 2, roundingM2: 0 }).slowError.sd; // 2
+ * singerModel({ agility: { sd: 1, timeS: 2 }, noiseScaleM: 2, extraWhiteM2: 0 }).slowError.sd; // 2
  */
 export function singerModel(settings: SmootherSettings): SingerModel {
   const scale = settings.noiseScaleM;
@@ -47,20 +47,20 @@ export function singerModel(settings: SmootherSettings): SingerModel {
 }
 
 /**
- * Variance of the white part of a position, m2: the receiver's and that of the rounding in the file.
+ * Variance of the white part of a position, m2: the receiver's usual share and what is beyond it.
  *
  * @example
  * whiteVarianceM2(0, 0.1); // 0.103
  */
-export function whiteVarianceM2(noiseScaleM: number, roundingM2: number): number {
-  return (ERROR_SHAPE.white * noiseScaleM) ** 2 + WHITE_FLOOR_M2 + roundingM2;
+export function whiteVarianceM2(noiseScaleM: number, extraWhiteM2: number): number {
+  return (ERROR_SHAPE.white * noiseScaleM) ** 2 + WHITE_FLOOR_M2 + extraWhiteM2;
 }
 
 /**
  * The transition over a step for a setting, as the smoother asks for it.
  *
  * @example
- * settingsTerms({ agility: { sd: 1, timeS: 2 }, noiseScaleM: 2, roundingM2: 0 })(3)[0]; // 3
+ * settingsTerms({ agility: { sd: 1, timeS: 2 }, noiseScaleM: 2, extraWhiteM2: 0 })(3)[0]; // 3
  */
 export function settingsTerms(settings: SmootherSettings): (stepS: number) => TransitionTerms {
   const model = singerModel(settings);
