@@ -6,6 +6,7 @@ import { analysePrepared } from "@/lib/analysis/analyse-prepared";
 import type { Analysis } from "@/lib/analysis/analysis";
 import { readFile, type FileRead, type ReadOutcome } from "@/lib/formats/read-file";
 import { harmlessName } from "@/lib/formats/unzip";
+import { SPAN_LIMIT_MS } from "@/lib/track/believable-fixes";
 import { encodeSeries } from "@/lib/track/series-blob";
 import { prepareTrack } from "@/lib/track/prepare-track";
 import type { Fixes } from "@/lib/track/fixes";
@@ -16,9 +17,6 @@ import { guessDiscipline } from "./guess-discipline";
 
 /** Reading alone is given up before the pool ends the whole worker. */
 const READ_TIME_MS = 30_000;
-
-/** Longer than any outing; the uniform clock of a longer one would fill the memory with nothing. */
-const SPAN_MS_MAX = 48 * 3_600_000;
 
 /** The pool calls this in a worker thread: one file in, one outcome for each track in it. */
 export default async function analyseFile({ task, progress }: WorkerMessage): Promise<TrackOutcome[]> {
@@ -59,7 +57,7 @@ function withEntryNames(outcomes: ReadOutcome[], fileName: string) {
 
 function analysed(entryName: string, read: FileRead, task: AnalysisTask): TrackOutcome {
   const spanMs = middleSpanMs(read.fixes);
-  if (spanMs > SPAN_MS_MAX) {
+  if (spanMs > SPAN_LIMIT_MS) {
     const days = Math.round(spanMs / 86_400_000).toLocaleString("en");
     return {
       kind: "refused",

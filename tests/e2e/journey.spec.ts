@@ -62,7 +62,7 @@ test("every file gets a verdict in words", async ({ page }) => {
     "fixtures/tcx/two-laps.tcx",
     "fixtures/archive/two-sessions.zip",
   ]);
-  await expect(rows.filter({ hasText: "two-sessions.zip" })).toContainText("2 of 2 read");
+  await expect(rows.filter({ hasText: "two-sessions.zip" })).toContainText("2 of 3 read");
   await expect(rows.filter({ hasText: "31_08_2019.gpx" })).toContainText("read");
   await upload(page, ["fixtures/gpx/31_08_2019.gpx"]);
   await expect(rows.first()).toContainText("in your log");

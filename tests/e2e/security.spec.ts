@@ -34,7 +34,7 @@ test("the sign-in cookie is bound to the host, hidden from scripts, and dead aft
   expect(cookie).toMatchObject({ secure: true, httpOnly: true, sameSite: "Lax", path: "/" });
   const before = await context.cookies();
   await page
-    .getByRole("button", { name: /Menu|Cookie Rider/ })
+    .locator("summary:visible", { hasText: /Menu|Cookie Rider/ })
     .first()
     .click();
   await page.locator("button:visible", { hasText: "Sign out" }).first().click();
