@@ -55,7 +55,7 @@ export function analysePrepared(prepared: PreparedTrack, options: AnalysisOption
   const { spans } = findOnFoil(track, options, elevationM && { timeMs, elevationM });
   const onFoil = foilMask(track, spans);
   const wayM = cumulatedWayM(track, onFoil);
-  const { bumpRides, lulls } = findBumps(track, spans, wayM);
+  const { bumpRides, lulls } = findBumps(track, spans, wayM, options.discipline);
   const series = speedSeriesOf({
     track,
     wayM,

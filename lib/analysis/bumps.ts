@@ -2,7 +2,7 @@ import { at } from "@/lib/errors/invariant";
 import { median } from "@/lib/numeric/quantile";
 import { turningPoints, type TurningPoint } from "@/lib/numeric/turning-points";
 import type { SmoothedTrack } from "@/lib/track/smoothed-track";
-import type { BumpRide, Lull } from "./analysis";
+import type { BumpRide, Discipline, Lull } from "./analysis";
 import type { FoilSpan } from "./on-foil";
 import { valueAt } from "./value-at";
 
@@ -12,6 +12,12 @@ export const SWING_MPS_MIN = 0.5;
 export const SWING_STANDARD_ERRORS = 3 * Math.SQRT2;
 /** A swing that every rider feels counts on the poorest receiver too (m/s). Trials, no published source. */
 export const SWING_MPS_MAX = 1;
+/**
+ * Under a hand wing the push is steady and real surges are few, so that the same noise makes more of the swings: more standard errors and a
+ * higher ceiling are asked. Trials on modelled sessions, no published source.
+ */
+const WING_TIMES = 1.3;
+const WING_MPS_MAX = 1.4;
 /** Standard gravity, exact by definition (m/s2). Source: CGPM 1901, resolution 2. */
 export const STANDARD_GRAVITY_MPS2 = 9.80665;
 /**
@@ -39,14 +45,16 @@ export function energyHeightM(speedMps: number): number {
 }
 
 /** The swing that counts, from the median standard error on foil. */
-function swingOf(track: SmoothedTrack, spans: readonly FoilSpan[]): number {
+function swingOf(track: SmoothedTrack, spans: readonly FoilSpan[], discipline: Discipline): number {
   const errors: number[] = [];
   const stride = Math.max(1, Math.round(2000 / track.stepMs));
   for (const span of spans) {
     for (let i = Math.ceil(span.start); i <= span.end; i += stride) errors.push(track.speedSeMps[i] ?? 0);
   }
   const error = errors.length > 0 ? median(errors) : 0;
-  return Math.min(SWING_MPS_MAX, Math.max(SWING_MPS_MIN, SWING_STANDARD_ERRORS * error));
+  const wing = discipline === "wing";
+  const asked = SWING_STANDARD_ERRORS * error * (wing ? WING_TIMES : 1);
+  return Math.min(wing ? WING_MPS_MAX : SWING_MPS_MAX, Math.max(SWING_MPS_MIN, asked));
 }
 
 /** Fractional index, walking from one sample to another, at which the column first passes the level. */
@@ -123,20 +131,21 @@ function bumpsOfSpan(context: Context, span: FoilSpan, swing: number): BumpsAndL
 
 /**
  * Bump rides and lulls on foil, from the turning points of smoothed speed by a zig-zag with a swing of at least
- * max(0.5 m/s, 3 standard errors of a difference), never more than 1 m/s.
+ * max(0.5 m/s, 3 standard errors of a difference), never more than 1 m/s; for a wing 4 standard errors and 1.4 m/s.
  *
  * A bump ride runs from the up-crossing to the down-crossing of the middle between a peak and its neighbouring
  * lulls; its gain is lull to peak. A peak that the touchdown cuts off before the speed has fallen by a swing is left
  * out. A lull is the fall from a peak to the next lowest speed, without 8 % of its energy height at the top and 4 % at
- * the bottom, below 9 m/s; it kept the foil when no touchdown follows within 2 s of its lowest speed. In: the track, spans on foil, the cumulated way.
+ * the bottom, below 9 m/s; it kept the foil when no touchdown follows within 2 s of its lowest speed. In: the track, spans on foil, the cumulated way, the discipline.
  * Out: both in order of time; times in UTC ms.
  */
 export function findBumps(
   track: SmoothedTrack,
   spans: readonly FoilSpan[],
   wayM: Float64Array,
+  discipline: Discipline = "downwind",
 ): BumpsAndLulls {
-  const swing = swingOf(track, spans);
+  const swing = swingOf(track, spans, discipline);
   const parts = spans.map((span) => bumpsOfSpan({ track, wayM }, span, swing));
   return {
     bumpRides: parts.flatMap((part) => part.bumpRides),
