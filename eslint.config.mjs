@@ -51,10 +51,11 @@ export const zones = [
   { room: "lib/display", ours: floor, npm: [] },
   { room: "lib/worker", ours: [...pureLib, "lib/worker"], npm: ["piscina", "node:*"] },
   { room: "lib/server", ours: [...pureLib, "lib/worker", "lib/server", "db"], npm: ["*"] },
-  // JSON columns are typed by the science that fills them, hence track and analysis.
+  // JSON columns are typed by the science that fills them, and kinds of part are named once, hence track,
+  // analysis and gear.
   {
     room: "db",
-    ours: [...floor, "lib/track", "lib/analysis", "db"],
+    ours: [...floor, "lib/track", "lib/analysis", "lib/gear", "db"],
     npm: ["drizzle-orm", "@libsql/client", "uuidv7", "node:*"],
   },
   { room: "components/ui", ours: ["components/ui", "lib/display", ...floor], npm: ui },

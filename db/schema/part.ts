@@ -1,16 +1,7 @@
 import { index, integer, sqliteTable, text } from "drizzle-orm/sqlite-core";
+import { PART_KINDS } from "@/lib/gear/dimension-fields";
 import { createdAtColumn, idColumn } from "./columns";
 import { user } from "./user";
-
-export const PART_KINDS = [
-  "front_wing",
-  "rear_wing",
-  "fuselage",
-  "mast",
-  "board",
-  "hand_wing",
-  "shim_set",
-] as const;
 
 /** A thing that can be bolted on. `dimensions` is validated per kind by lib/gear (SI units in its names). */
 export const part = sqliteTable(
