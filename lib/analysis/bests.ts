@@ -59,13 +59,24 @@ const EXCESS_SHARE = 0.7;
 /** A top over a second or two is cut off by the smoother as well, which makes up for half of it. */
 const EXCESS_SHARE_SHORT = 0.4;
 
+/** Windows from here on (s) slide over each other in many more places than the separate rivals that are counted. */
+const SLIDING_S = 30;
+
+function excessShare(timeS: number): number {
+  if (timeS < SHORT_WINDOW_S) return EXCESS_SHARE_SHORT;
+  return timeS < SLIDING_S ? EXCESS_SHARE : 1;
+}
+
+/** What the length of a weaving way under noise is uncertain by, as a share of it. Trials, no source. */
+const WEAVING_SHARE_SE = 0.002;
+
 /** The best with the expected excess of a maximum among near rivals taken off. */
 function withoutExcess(best: Best, curve: WayCurve): Best {
   const timeS = (best.endMs - best.startMs) / 1000;
   const excess = excessOfMaximum(rivalSpeeds(curve, timeS, best.speedMps - 3 * best.seMps), best.seMps);
   return {
     ...best,
-    speedMps: best.speedMps - (timeS < SHORT_WINDOW_S ? EXCESS_SHARE_SHORT : EXCESS_SHARE) * excess,
+    speedMps: best.speedMps - excessShare(timeS) * excess,
   };
 }
 
@@ -92,7 +103,10 @@ export function bestFigures(
   const stated = (best: Best): Best => {
     const timeS = (best.endMs - best.startMs) / 1000;
     const cut = recorder.filtered ? filteredShareSe(timeS) * best.speedMps : 0;
-    return { ...best, seMps: Math.hypot(best.seMps, systematicSpeedSe(series, best), cut) };
+    return {
+      ...best,
+      seMps: Math.hypot(best.seMps, systematicSpeedSe(series, best), cut, WEAVING_SHARE_SE * best.speedMps),
+    };
   };
   const find = (key: BestKey): Best | Withheld => {
     const wanted = BEST_WINDOWS[key];

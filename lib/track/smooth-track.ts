@@ -31,7 +31,9 @@ const NEAR_FIX_S = 0.3;
 /** Below this speed the noise term of a mean speed is no longer a small correction. */
 const NOISE_TERM_MPS = 2;
 /** Between distant fixes the model allows more weaving than anybody does; no more than this (m2/s2) is believed. */
-const NOISE_TERM_VARIANCE_MAX = 0.18;
+const NOISE_TERM_VARIANCE_MAX = 0.14;
+/** A receiver's own speed is not shortened by smoothing: only the rest of the term counts with it. Trials, no source. */
+const NOISE_TERM_SHARE_WITH_SPEED = 0.4;
 
 /** A smoothed track, not yet told from the land, with what the smoothing found out about the receiver. */
 export type Smoothing = {
@@ -189,11 +191,15 @@ function stiffPass(work: Work, columns: FineColumns, clock: PlaneClock): RunEnds
 }
 
 function loosePass(work: Work, columns: FineColumns, clock: PlaneClock): void {
+  const termShare = work.velocity ? NOISE_TERM_SHARE_WITH_SPEED : 1;
   let next = 0;
   smoothInChunks(work, settings(work, LOOSE), (chunk) => {
     next = eachSample(chunk, clock, next, (k, path, i, share) => {
       const v = Math.sqrt(path.vx * path.vx + path.vy * path.vy);
-      const variance = Math.min(NOISE_TERM_VARIANCE_MAX, between(chunk.states.velocityVariance, i, share));
+      const variance = Math.min(
+        NOISE_TERM_VARIANCE_MAX,
+        termShare * between(chunk.states.velocityVariance, i, share),
+      );
       // A smoothed velocity is a mean over what noise hides; the mean of a speed exceeds the speed of a mean by this.
       columns.speedMpsLoose[k] = v > NOISE_TERM_MPS ? v + variance / (2 * v) : v;
     });
