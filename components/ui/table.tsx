@@ -70,8 +70,10 @@ export function Th(props: ThProps) {
       scope={scope}
       aria-sort={sorted}
       className={classNames(
-        "px-2 py-2 align-bottom first:pl-0 last:pr-0",
-        scope === "col" ? "border-ink border-b text-sm font-semibold" : "font-medium align-baseline",
+        "px-2 py-2 [overflow-wrap:normal] first:pl-0 last:pr-0",
+        scope === "col"
+          ? "border-ink border-b align-bottom text-sm font-semibold"
+          : "align-baseline font-medium",
         numeric && "text-right",
         className,
       )}
@@ -81,7 +83,11 @@ export function Th(props: ThProps) {
         <Link
           href={sortHref}
           scroll={false}
-          className="-my-0.5 inline-flex items-baseline gap-1 py-0.5 underline decoration-hairline underline-offset-4 hover:decoration-ink"
+          className={classNames(
+            "-my-0.5 inline-flex items-baseline gap-1 py-0.5 underline decoration-hairline underline-offset-4 hover:decoration-ink",
+            // The mark stands on the free side, so that the words end where their figures end.
+            numeric && "flex-row-reverse",
+          )}
         >
           <span>{words}</span>
           <span

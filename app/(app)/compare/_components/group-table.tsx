@@ -29,7 +29,7 @@ export function GroupTable(props: {
       <tbody>
         {groups.map((group) => (
           <Tr key={group.key}>
-            <Th scope="row" className="bg-paper sticky left-0">
+            <Th scope="row" className="bg-paper sticky left-0 min-w-28">
               {group.name}
             </Th>
             <Td numeric>{group.sessions}</Td>

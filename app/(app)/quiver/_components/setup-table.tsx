@@ -29,20 +29,22 @@ export function SetupTable(props: {
       <tbody>
         {setups.map((setup) => (
           <Tr key={setup.id}>
-            <Th scope="row">
+            <Th scope="row" className="min-w-32">
               <Link className="link" href={`/quiver/setups/${setup.id}`}>
                 {setup.name}
               </Link>
             </Th>
-            <Td>{name(setup.frontWingId)}</Td>
-            <Td>{name(setup.rearWingId)}</Td>
-            <Td>
+            <Td className="min-w-28">{name(setup.frontWingId)}</Td>
+            <Td className="min-w-28">{name(setup.rearWingId)}</Td>
+            <Td className="min-w-36">
               {[describeMastPosition(setup.mastPositionMm), describeShim(setup.shimStackDeg)]
                 .filter((words) => words !== null)
                 .join(", ")}
             </Td>
             <Td numeric>{setup.spans}</Td>
-            <Td>{setup.lastRiddenMs === null ? "never" : formatDate(setup.lastRiddenMs, "UTC")}</Td>
+            <Td className="whitespace-nowrap">
+              {setup.lastRiddenMs === null ? "never" : formatDate(setup.lastRiddenMs, "UTC")}
+            </Td>
             <Td>
               <LinkButton
                 size="small"

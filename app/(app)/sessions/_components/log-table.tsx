@@ -87,7 +87,7 @@ export function LogTable(props: { rows: readonly LogRow[]; filter: LogFilter; un
       <tbody>
         {rows.map((row) => (
           <Tr key={row.id}>
-            <Th scope="row" className="bg-paper sticky left-0 z-10 max-w-40 min-w-32 sm:max-w-64">
+            <Th scope="row" className="bg-paper sticky left-0 z-10 max-w-64 min-w-44">
               <Link className="link" href={`/sessions/${row.id}`}>
                 {row.title}
               </Link>
@@ -96,7 +96,7 @@ export function LogTable(props: { rows: readonly LogRow[]; filter: LogFilter; un
               {formatDate(row.startMs, row.timeZone)}{" "}
               <span className="num text-muted">{formatTime(row.startMs, row.timeZone)}</span>
             </Td>
-            <Td className="min-w-32">{row.setups.join(", ") || "–"}</Td>
+            <Td className="min-w-44">{row.setups.join(", ") || "–"}</Td>
             <Td numeric className="whitespace-nowrap">
               {formatSpeed(row.windSpeedMps, units.speed)}
               {row.windFromDeg !== null && <span className="unit"> {compassPoint(row.windFromDeg)}</span>}
