@@ -1,20 +1,38 @@
 "use client";
 
-import { useId, useMemo } from "react";
+import { useEffect, useId, useMemo, useRef, useState } from "react";
 import { formatNumber } from "@/lib/display/format-number";
 import { niceTicks } from "@/lib/display/ticks";
 import type { GlideFigures, Lull } from "@/lib/analysis/analysis";
 import type { SpeedSeries } from "@/lib/track/speed-series";
 
-const WIDTH = 640;
-const HEIGHT = 260;
-const PAD = { left: 46, right: 96, top: 14, bottom: 34 };
+/** Until the page has said how wide it is. */
+const WIDTH_FIRST = 640;
+const HEIGHT = 320;
+const PAD = { left: 40, right: 84, top: 30, bottom: 46 };
 /** Standard gravity, m/s². Source: 3rd CGPM (1901). */
 const G = 9.80665;
 /** More lines than this make a blot; the rest is left out of the drawing, never out of the figure. */
 const LINES_MAX = 400;
 
 type Axes = { readonly x: (m: number) => number; readonly y: (m: number) => number };
+
+/** The drawing's own width, so that its words keep their size on a phone. */
+function useWidth() {
+  const box = useRef<HTMLDivElement>(null);
+  const [width, setWidth] = useState(WIDTH_FIRST);
+  useEffect(() => {
+    const element = box.current;
+    if (element === null) return;
+    const observer = new ResizeObserver(([entry]) => {
+      const wide = Math.floor(entry?.contentRect.width ?? 0);
+      if (wide > 0) setWidth(wide);
+    });
+    observer.observe(element);
+    return () => observer.disconnect();
+  }, []);
+  return { box, width };
+}
 
 /** The line of one lull: energy height lost against distance from its peak, as an SVG path. */
 function lullPath(series: SpeedSeries, lull: Lull, { x, y }: Axes): string {
@@ -37,6 +55,7 @@ function lullPath(series: SpeedSeries, lull: Lull, { x, y }: Axes): string {
 export function LullFan(props: { series: SpeedSeries; lulls: readonly Lull[]; glide: GlideFigures | null }) {
   const { series, lulls, glide } = props;
   const titleId = useId();
+  const { box, width } = useWidth();
   const shown = useMemo(() => {
     const every = Math.max(1, Math.ceil(lulls.length / LINES_MAX));
     return lulls.filter((_, i) => i % every === 0);
@@ -45,10 +64,10 @@ export function LullFan(props: { series: SpeedSeries; lulls: readonly Lull[]; gl
   const mostHeightM = Math.max(0.5, ...shown.map((lull) => lull.heightLostM)) * 1.05;
   const axes = useMemo<Axes>(
     () => ({
-      x: (m) => PAD.left + (m / mostM) * (WIDTH - PAD.left - PAD.right),
+      x: (m) => PAD.left + (m / mostM) * (width - PAD.left - PAD.right),
       y: (m) => PAD.top + (m / mostHeightM) * (HEIGHT - PAD.top - PAD.bottom),
     }),
-    [mostM, mostHeightM],
+    [mostM, mostHeightM, width],
   );
   const lines = useMemo(
     () => shown.map((lull) => lullPath(series, lull, axes)).join(""),
@@ -59,56 +78,54 @@ export function LullFan(props: { series: SpeedSeries; lulls: readonly Lull[]; gl
       ? `${lulls.length} lulls, too few for a glide ratio.`
       : `${glide.lulls} lulls. Pooled glide ratio ${formatNumber(glide.ratio, 1)}, 95 % interval ${formatNumber(glide.ratioLow, 1)} to ${formatNumber(glide.ratioHigh, 1)}.`;
   return (
-    <svg
-      viewBox={`0 0 ${WIDTH} ${HEIGHT}`}
-      role="img"
-      aria-labelledby={titleId}
-      className="bg-sheet rule-ink h-auto w-full max-w-4xl"
-    >
-      <title id={titleId}>{`Lull fan. ${words}`}</title>
+    <div ref={box} className="max-w-4xl">
+      <svg
+        viewBox={`0 0 ${width} ${HEIGHT}`}
+        role="img"
+        aria-labelledby={titleId}
+        className="bg-sheet rule-ink block h-auto w-full"
+      >
+        <title id={titleId}>{`Lull fan. ${words}`}</title>
+        <Scales axes={axes} width={width} mostM={mostM} mostHeightM={mostHeightM} />
+        <path d={lines} fill="none" stroke="var(--swell)" strokeWidth="1" opacity="0.45" />
+        {glide !== null && <Slope glide={glide} axes={axes} mostM={mostM} mostHeightM={mostHeightM} />}
+      </svg>
+    </div>
+  );
+}
+
+/** Heights to the left, ways below, each with its name where no line runs. */
+function Scales(props: { axes: Axes; width: number; mostM: number; mostHeightM: number }) {
+  const { axes, width, mostM, mostHeightM } = props;
+  const right = width - PAD.right;
+  return (
+    <g fontSize="12" fill="var(--muted)">
       {niceTicks(0, mostHeightM, 4).map((tick) => (
         <g key={`h${tick}`}>
-          <line
-            x1={PAD.left}
-            x2={WIDTH - PAD.right}
-            y1={axes.y(tick)}
-            y2={axes.y(tick)}
-            stroke="var(--hairline)"
-          />
-          <text
-            x={PAD.left - 8}
-            y={axes.y(tick) + 4}
-            textAnchor="end"
-            fontSize="12"
-            fill="var(--muted)"
-            className="num"
-          >
+          <line x1={PAD.left} x2={right} y1={axes.y(tick)} y2={axes.y(tick)} stroke="var(--hairline)" />
+          <text x={PAD.left - 8} y={axes.y(tick) + 4} textAnchor="end" className="num">
             {formatNumber(tick, 1)}
           </text>
         </g>
       ))}
-      {niceTicks(0, mostM, 6).map((tick) => (
+      {niceTicks(0, mostM, Math.max(2, Math.floor(width / 90))).map((tick) => (
         <text
           key={`d${tick}`}
           x={axes.x(tick)}
-          y={HEIGHT - 14}
+          y={HEIGHT - PAD.bottom + 18}
           textAnchor="middle"
-          fontSize="12"
-          fill="var(--muted)"
           className="num"
         >
           {formatNumber(tick, 0)}
         </text>
       ))}
-      <text x={WIDTH - PAD.right + 8} y={HEIGHT - 14} fontSize="12" fill="var(--muted)">
-        m of way
+      <text x={8} y={14}>
+        Energy height lost, m
       </text>
-      <text x={PAD.left + 4} y={HEIGHT - PAD.bottom - 6} fontSize="12" fill="var(--muted)">
-        m of energy height lost
+      <text x={right} y={HEIGHT - 8} textAnchor="end">
+        Way made, m
       </text>
-      <path d={lines} fill="none" stroke="var(--swell)" strokeWidth="1" opacity="0.45" />
-      {glide !== null && <Slope glide={glide} axes={axes} mostM={mostM} mostHeightM={mostHeightM} />}
-    </svg>
+    </g>
   );
 }
 
@@ -121,6 +138,9 @@ function Slope(props: { glide: GlideFigures; axes: Axes; mostM: number; mostHeig
   const at = end(glide.ratio);
   const from = { x: axes.x(0), y: axes.y(0) };
   const [low, high] = [end(glide.ratioLow), end(glide.ratioHigh)];
+  // The words stand over the lines and above the scale, wherever the slope ends.
+  const wordsY = Math.min(at.y, HEIGHT - PAD.bottom - 24);
+  const halo = { paintOrder: "stroke", stroke: "var(--sheet)", strokeWidth: 4, className: "num" };
   return (
     <>
       <path
@@ -129,10 +149,10 @@ function Slope(props: { glide: GlideFigures; axes: Axes; mostM: number; mostHeig
         opacity="0.18"
       />
       <line x1={from.x} y1={from.y} x2={at.x} y2={at.y} stroke="var(--buoy)" strokeWidth="2.5" />
-      <text x={at.x + 8} y={at.y + 2} fontSize="18" fontWeight="600" fill="var(--ink)" className="num">
+      <text x={at.x + 8} y={wordsY + 2} fontSize="18" fontWeight="600" fill="var(--ink)" {...halo}>
         {formatNumber(glide.ratio, 1)}
       </text>
-      <text x={at.x + 8} y={at.y + 18} fontSize="12" fill="var(--muted)" className="num">
+      <text x={at.x + 8} y={wordsY + 18} fontSize="12" fill="var(--muted)" {...halo}>
         {formatNumber(glide.ratioLow, 1)}–{formatNumber(glide.ratioHigh, 1)}
       </text>
     </>

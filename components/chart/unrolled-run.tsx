@@ -73,7 +73,7 @@ function wordsOf(run: Run, place: Place, unit: DistanceUnit): string {
       ? "to the same scale"
       : place.stretched > 1
         ? `stretched ${factor} times`
-        : `squeezed to ${factor}`;
+        : `at ${factor} of that scale`;
   return `${way}; sideways ${sideways}.`;
 }
 
@@ -83,7 +83,9 @@ function drawScale(surface: Surface, run: Run, place: Place, unit: DistanceUnit)
   const high = distanceFromM(run.alongMaxM, unit);
   context.font = '12px "Spline Sans Mono", ui-monospace, monospace';
   context.textBaseline = "alphabetic";
-  for (const tick of niceTicks(low, high, Math.max(2, Math.floor(surface.width / 110)))) {
+  const ticks = niceTicks(low, high, Math.max(2, Math.floor(surface.width / 110)));
+  const decimals = ticks.every((tick) => tick % 1 === 0) ? 0 : 1;
+  for (const tick of ticks) {
     const x = place.x(distanceToM(tick, unit));
     context.strokeStyle = tokens.hairline;
     context.beginPath();
@@ -92,7 +94,7 @@ function drawScale(surface: Surface, run: Run, place: Place, unit: DistanceUnit)
     context.stroke();
     context.fillStyle = tokens.muted;
     context.textAlign = x < 24 ? "left" : x > surface.width - 24 ? "right" : "center";
-    context.fillText(`${formatNumber(tick, tick % 1 === 0 ? 0 : 1)} ${unit}`, x, height - 9);
+    context.fillText(`${formatNumber(tick, decimals)} ${unit}`, x, height - 9);
   }
 }
 

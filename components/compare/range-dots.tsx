@@ -15,6 +15,8 @@ export type RangeRow = {
 };
 
 const PAD_SHARE = 0.06;
+/** Name above its dots on a phone, beside them where there is room. */
+const COLUMNS = "grid gap-x-3 sm:grid-cols-[minmax(0,2fr)_minmax(0,3fr)]";
 
 /**
  * Dots with ranges on one axis: thin line from least to most, thick line over the middle half, dot at the
@@ -39,13 +41,10 @@ export function RangeDots(props: {
   return (
     <div className="rule-ink" aria-hidden="true">
       {rows.map((row) => (
-        <div
-          key={row.key}
-          className="rule-hair grid grid-cols-[minmax(0,2fr)_minmax(0,3fr)] items-center gap-3 py-1"
-        >
-          <div className="min-w-0">
-            <p className="truncate font-medium">{row.name}</p>
-            <p className="text-muted truncate text-sm">{row.evidence}</p>
+        <div key={row.key} className={`rule-hair items-center py-1 ${COLUMNS}`}>
+          <div className="flex min-w-0 flex-wrap items-baseline justify-between gap-x-3 sm:block">
+            <p className="font-medium">{row.name}</p>
+            <p className="text-muted text-sm">{row.evidence}</p>
           </div>
           <svg className="h-10 w-full overflow-visible" role="presentation">
             {ticks.map((tick) => (
@@ -75,8 +74,8 @@ export function RangeDots(props: {
           </svg>
         </div>
       ))}
-      <div className="grid grid-cols-[minmax(0,2fr)_minmax(0,3fr)] gap-3">
-        <p className="text-muted text-sm">{unit}</p>
+      <div className={COLUMNS}>
+        <p className="text-muted order-2 text-sm sm:order-none">{unit}</p>
         <svg className="h-6 w-full overflow-visible" role="presentation">
           {ticks.map((tick) => (
             <text

@@ -17,6 +17,9 @@ const WIDTH = 1000;
 const atKm = (km: number) => ((km / LENGTH_KM) * WIDTH).toFixed(1);
 const atMinute = (minute: number) => ((minute / EXAMPLE_MINUTES) * WIDTH).toFixed(1);
 
+const KM_STEP = 4;
+const KM_TICKS = Array.from({ length: Math.floor(LENGTH_KM / KM_STEP) + 1 }, (_, i) => i * KM_STEP);
+
 const FIGURES: readonly Figure[] = [
   { label: "Best 500 m", value: formatNumber(RUN.best500Kn, 1), unit: "kn", big: true },
   { label: "On foil", value: formatShare(RUN.onFoilShare), unit: "% of way", big: true },
@@ -52,7 +55,7 @@ export function ExampleSheet() {
 
 function Drawings() {
   const share = (minute: number) => `${(minute / EXAMPLE_MINUTES) * 100}%`;
-  const km = [0, 4, 8, 12, 16].map((at) => ({ share: at / LENGTH_KM, text: at === 0 ? "0 km" : `${at}` }));
+  const km = KM_TICKS.map((at) => ({ share: at / LENGTH_KM, text: at === 0 ? "0 km" : `${at}` }));
   const minutes = [0, 15, 30, 45, 60].map((at) => ({
     share: at / EXAMPLE_MINUTES,
     text: at === 0 ? "0 min" : `${at}`,
@@ -98,7 +101,11 @@ function Scale({ ticks }: { ticks: readonly { share: number; text: string }[] })
   return (
     <div className="num text-muted relative h-5 text-xs">
       {ticks.map((tick) => (
-        <span key={tick.text} className="absolute pl-1" style={{ left: `${tick.share * 100}%` }}>
+        <span
+          key={tick.text}
+          className={tick.share > 0.9 ? "absolute -translate-x-full pr-1" : "absolute pl-1"}
+          style={{ left: `${tick.share * 100}%` }}
+        >
           {tick.text}
         </span>
       ))}
@@ -125,7 +132,7 @@ function bandLines(points: readonly ExamplePoint[]) {
 function Unrolled() {
   return (
     <svg viewBox={`0 0 ${WIDTH} 120`} preserveAspectRatio="none" className="mt-1 block h-28 w-full sm:h-36">
-      {[4, 8, 12, 16].map((km) => (
+      {KM_TICKS.slice(1).map((km) => (
         <path key={km} d={`M${atKm(km)} 0V120`} stroke="var(--hairline)" vectorEffect="non-scaling-stroke" />
       ))}
       <path d={`M0 60H${WIDTH}`} stroke="var(--hairline)" vectorEffect="non-scaling-stroke" />
@@ -157,7 +164,7 @@ function Timeline() {
       {[5, 10, 15].map((kn) => (
         <span
           key={kn}
-          className="num text-muted absolute -translate-y-full text-xs"
+          className="num text-muted bg-sheet absolute z-10 -translate-y-full pr-1 text-xs leading-tight"
           style={{ top: `${(Number(y(kn)) / 132) * 100}%` }}
         >
           {kn}
