@@ -9,7 +9,7 @@ export default function NotFound() {
     <>
       <PageHeader
         title="This page is not here"
-        subtitle="It may have been deleted, the address may be mistyped, or it belongs to somebody who has not shared it with you."
+        subtitle="It may have been deleted, the address may be mistyped, or it belongs to somebody else."
       />
       <div className="flex flex-wrap gap-3">
         <LinkButton href="/sessions" look="main">

@@ -17,7 +17,7 @@ export default function FrontPage() {
           <p className="text-muted mt-4 max-w-2xl text-lg">
             Trimwake is the working log and test bench of people who ride, coach, race and develop hydrofoils
             on open water. It turns a GPS track into what you did on the water, ties it to the gear that was
-            bolted together, and says with honest uncertainty what made the difference.
+            bolted together, and shows which setup ran fastest and how far to trust that.
           </p>
         </div>
         <FrontActions />

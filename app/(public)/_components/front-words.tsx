@@ -50,7 +50,7 @@ export function FrontCautions() {
         <div className="max-w-prose">
           <p>{CAUTIONS.trim}</p>
           <p className="mt-3">
-            Your tracks are yours alone: nobody sees a session unless you share it.{" "}
+            Your tracks are yours alone: no other account sees them.{" "}
             <Link href="/handbook/privacy" className="link">
               What is kept, and for how long
             </Link>

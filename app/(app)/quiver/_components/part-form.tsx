@@ -28,7 +28,9 @@ export function PartForm(props: {
   const values = state.status === "error" ? state.values : initial;
   return (
     <form action={action} noValidate className="flex max-w-2xl flex-col gap-6">
-      {state.status === "error" && <title>{`Error: ${PART_KIND_NAMES[kind]}`}</title>}
+      {state.status === "error" && (
+        <title>{`Error: ${partId === undefined ? "New part" : PART_KIND_NAMES[kind]} - Trimwake`}</title>
+      )}
       <ErrorSummary errors={formErrors(state)} />
       <input type="hidden" name="kind" value={kind} />
       {partId !== undefined && <input type="hidden" name="partId" value={partId} />}

@@ -26,7 +26,9 @@ export function SetupForm(props: {
   const values = state.status === "error" ? state.values : initial;
   return (
     <form action={action} noValidate className="flex max-w-2xl flex-col gap-6">
-      {state.status === "error" && <title>Error: Setup</title>}
+      {state.status === "error" && (
+        <title>{`Error: ${setupId === undefined ? "New setup" : "Setup"} - Trimwake`}</title>
+      )}
       <ErrorSummary errors={formErrors(state)} />
       {setupId !== undefined && <input type="hidden" name="setupId" value={setupId} />}
       {copiedFromId !== undefined && <input type="hidden" name="copiedFromId" value={copiedFromId} />}

@@ -12,7 +12,8 @@ export const comparisonsChapter: Chapter = {
         <p>
           For every setup, or for every front wing, rear wing, mast position or shim: the number of sessions,
           the time on foil, and the median with the spread of bump-riding speed, best 500 m, glide ratio and
-          on-foil share. The median is the middle session; half of the sessions lie within the bar.
+          on-foil share. The median is the middle session; the middle half of the sessions lies within the
+          thick bar, and the thin line runs from the least to the most.
         </p>
       ),
     },

@@ -1,3 +1,4 @@
+import { RESTORE_DAYS } from "@/lib/server/sessions/delete-session";
 import { ABSOLUTE_DAYS, IDLE_DAYS } from "@/lib/server/auth/lucia";
 import type { Chapter } from "./chapter";
 
@@ -61,9 +62,10 @@ export const privacyChapter: Chapter = {
       title: "Taking things away",
       body: (
         <p>
-          A session you delete leaves the log at once, with a way back. Closing the whole account and an
-          export of everything in one file are not built yet: until then, the people who run this Trimwake do
-          it for you.
+          A session you delete leaves the log at once and can be brought back for {RESTORE_DAYS} days; then it
+          is removed for good, and its file with it once no other session needs it. Closing the whole account
+          and an export of everything in one file are not built yet: until then, the people who run this
+          Trimwake do it for you.
         </p>
       ),
     },
