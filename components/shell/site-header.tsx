@@ -68,14 +68,15 @@ function SignedIn({ person, signOut }: { person: { readonly name: string }; sign
         >
           <PersonLinks signOut={signOut} />
         </Menu>
+        {/* On the beach the upload is what a phone is taken out for. */}
+        <div className="md:hidden">
+          <LinkButton href={UPLOAD_PATH} look="main">
+            Upload
+          </LinkButton>
+        </div>
         <Menu label="Menu" className="md:hidden">
           <nav aria-label="Main">
             <ul>
-              <li>
-                <NavLink href={UPLOAD_PATH} className={`${menuItemClass} font-semibold`}>
-                  Upload tracks
-                </NavLink>
-              </li>
               {PLACES.map((place) => (
                 <li key={place.href}>
                   <NavLink href={place.href} className={menuItemClass}>
