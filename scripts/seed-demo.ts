@@ -1,4 +1,4 @@
-// Fills an empty data folder with the demo season, or prints the demo accounts (--accounts). Safe to run again.
+// Fills an empty data folder with the demo season. Safe to run again.
 import { existsSync, mkdirSync, readFileSync, rmSync, writeFileSync } from "node:fs";
 import path from "node:path";
 import process from "node:process";
@@ -22,14 +22,6 @@ const say = (text: string) => process.stdout.write(`${text}\n`);
 function markerState(): string | null {
   if (!existsSync(marker)) return null;
   return (JSON.parse(readFileSync(marker, "utf8")) as { state: string }).state;
-}
-
-function printAccounts(): void {
-  say(`\nTrimwake is on ${settings.origin}\n\nDemo accounts (all invented):`);
-  for (const account of demoAccounts) {
-    say(`  ${account.email.padEnd(24)} ${account.password}   ${account.name}, ${account.role.toLowerCase()}`);
-  }
-  say("\nCtrl-C ends it.");
 }
 
 async function addAccount(email: string, weightKg: number): Promise<string> {
@@ -72,14 +64,12 @@ async function seed(): Promise<void> {
       if (done % 5 === 0 || done === of) say(`  ${rider.email}: ${done} of ${of} sessions`);
     });
   }
-  writeFileSync(marker, JSON.stringify({ state: "done" }));
+  // The accounts stand beside the state, so that a later start can print them without loading the app.
+  const accounts = demoAccounts.map(({ name, email, password, role }) => ({ name, email, password, role }));
+  writeFileSync(marker, JSON.stringify({ state: "done", accounts }));
 }
 
 async function main(): Promise<void> {
-  if (process.argv.includes("--accounts")) {
-    printAccounts();
-    return;
-  }
   const state = markerState();
   if (state === "done") return;
   if (state === "started") {

@@ -7,6 +7,7 @@ import {
   ensureBuilt,
   ensureInstalled,
   portFromEnv,
+  requireFreePort,
   requireNode,
   root,
   say,
@@ -18,6 +19,7 @@ requireNode();
 const settings = path.join(root, ".env");
 if (existsSync(settings)) process.loadEnvFile(settings);
 const port = portFromEnv();
+await requireFreePort(port);
 ensureInstalled();
 if (!ensureBuilt()) {
   say("The build failed; see above.");

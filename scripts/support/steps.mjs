@@ -2,6 +2,7 @@
 import { spawn, spawnSync } from "node:child_process";
 import { createHash } from "node:crypto";
 import { existsSync, mkdirSync, readdirSync, readFileSync, writeFileSync } from "node:fs";
+import net from "node:net";
 import path from "node:path";
 import process from "node:process";
 
@@ -135,6 +136,18 @@ export async function waitForHealth(port, child, seconds) {
     await new Promise((resolve) => setTimeout(resolve, 200));
   }
   return null;
+}
+
+/** Stops with a sentence when something listens on the port already. */
+export async function requireFreePort(port) {
+  const free = await new Promise((resolve) => {
+    const probe = net.createServer();
+    probe.once("error", () => resolve(false));
+    probe.listen(port, () => probe.close(() => resolve(true)));
+  });
+  if (free) return;
+  say(`Port ${port} is in use. End what listens there, or choose another: PORT=3001 before the command.`);
+  process.exit(1);
 }
 
 /**
