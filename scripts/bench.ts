@@ -1,6 +1,7 @@
 // npm run bench: speed and memory as ratios within one run. Machines are noisy: compare the ratios, not the seconds.
 import process from "node:process";
 import { benchAnalysis } from "@/tests/bench/analysis";
+import { benchDrawing } from "@/tests/bench/drawing";
 import { benchReading } from "@/tests/bench/reading";
 import { benchStoredTrack } from "@/tests/bench/stored-track";
 
@@ -8,6 +9,7 @@ async function main(): Promise<void> {
   await benchReading();
   await benchStoredTrack();
   await benchAnalysis();
+  await benchDrawing();
 }
 
 main().catch((error: unknown) => {
