@@ -2,7 +2,7 @@ import type { QualityReport } from "@/lib/track/quality";
 import type { SpeedSeries, Stretch } from "@/lib/track/speed-series";
 
 /** Raised whenever a change alters any figure; stored with every result. */
-export const ANALYSIS_VERSION = 4;
+export const ANALYSIS_VERSION = 5;
 
 export type Discipline = "downwind" | "wing" | "other";
 

@@ -12,6 +12,8 @@ const STEP_S_MAX = 20;
 const BLOCK_S = 6.5;
 const BLOCK_S_AFTER_LEAP = 300;
 const LEAP_MPS = 60;
+/** The local velocity is looked for over at least this many of the steps at hand: an uneven recorder has long ones. */
+const REACH_STEPS = 2.2;
 /** No local velocity is above this, so that short steps of fast recordings need no closer look. */
 const FASTEST_MPS = 40;
 /** Fixes looked at in all searches together: bounds the time on a file that is nothing but leaps. */
@@ -60,7 +62,7 @@ function departure(search: Search, i: number, before: Velocity): number {
   const dy = (path.yM[i] as number) - (path.yM[i - 1] as number);
   const allowed = JUMP_M + JUMP_MPS * Math.min(dt, 4) * Math.min(1, dt > 0.9 ? 1 : dt);
   if (Math.sqrt(dx * dx + dy * dy) + FASTEST_MPS * dt < allowed) return NaN;
-  localVelocity(path, { from: i - 1, direction: -1, reachS }, before);
+  localVelocity(path, { from: i - 1, direction: -1, reachS: Math.max(reachS, REACH_STEPS * dt) }, before);
   const ex = dx - before.east * dt;
   const ey = dy - before.north * dt;
   const off = Math.sqrt(ex * ex + ey * ey);
@@ -113,7 +115,8 @@ function blockEnd(search: Search, i: number, before: Velocity, jumpM: number): n
     const stepX = (xM[j] as number) - (xM[j - 1] as number);
     const stepY = (yM[j] as number) - (yM[j - 1] as number);
     if (Math.hypot(stepX, stepY) < 0.25 * jumpM && jumpM > 40) continue;
-    if (!localVelocity(path, { from: j, direction: 1, reachS: search.reachS }, after)) {
+    const reachS = Math.max(search.reachS, REACH_STEPS * lastS);
+    if (!localVelocity(path, { from: j, direction: 1, reachS }, after)) {
       after.east = before.east;
       after.north = before.north;
     }
