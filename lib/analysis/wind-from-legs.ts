@@ -15,6 +15,8 @@ const DEAD_DEG = 22;
 /** Waiting in the water: slower than this (m/s), carried by less than that. Common practice, no source. */
 const AFLOAT_MPS_MAX = 1.6;
 const DRIFT_MPS_MAX = 0.8;
+/** An uneven recorder writes straight ways in steps of some seconds (s): they are legs, not holes. Common practice, no source. */
+const LONG_STEP_S = 8;
 /** Fewer seconds of legs say nothing. */
 const LEGS_S_MIN = 60;
 
@@ -28,7 +30,7 @@ function legsByCourse(
   for (const span of spans) {
     for (let i = Math.ceil(span.start); i <= span.end; i++) {
       const steady = Math.abs(columns.rate[i] ?? 0) < LEG_RATE_MAX && (track.speedMps[i] ?? 0) > LEG_MPS_MIN;
-      if (!steady || (track.gapS[i] ?? 0) > 0) continue;
+      if (!steady || (track.gapS[i] ?? 0) > LONG_STEP_S) continue;
       const bin = (Math.round((columns.course[i] ?? 0) / RAD) + 360) % 360;
       seconds[bin] = (seconds[bin] ?? 0) + track.stepMs / 1000;
     }
@@ -85,7 +87,7 @@ function waitingDrift(track: SmoothedTrack, onFoil: ArrayLike<number>): Drift | 
       afloat =
         track.onWater[j] === 1 &&
         onFoil[j] !== 1 &&
-        (track.gapS[j] ?? 0) === 0 &&
+        (track.gapS[j] ?? 0) <= LONG_STEP_S &&
         (track.speedMps[j] ?? 0) <= AFLOAT_MPS_MAX;
     }
     if (!afloat) continue;

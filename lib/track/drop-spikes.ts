@@ -70,7 +70,7 @@ function departure(search: Search, i: number, before: Velocity): number {
 }
 
 /**
- * Distance (m) of a way from one that goes at one velocity first and at the other after, half the time each or, about a single fix left
+ * Distance (m) of a way from one that goes at one velocity first and at the other after, half the time each or, about one or two fixes left
  * out, turning whenever fits best.
  */
 function missOf(
@@ -130,7 +130,7 @@ function blockEnd(search: Search, i: number, before: Velocity, jumpM: number): n
         before,
         after,
         dt,
-        freely: j === i + 1,
+        freely: j <= i + 2,
       },
     );
     const size = Math.max(jumpM, backM);
