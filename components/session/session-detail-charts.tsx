@@ -70,7 +70,7 @@ export function SessionDetailCharts(props: SessionDetailChartsProps) {
       <Section
         id="unrolled"
         title="The run, unrolled"
-        reading="Along its own line to the right, sideways stretched; colour is speed, dashes are off foil."
+        reading="Along its own line to the right, sideways to another scale; colour is speed, dashes are off foil."
       >
         <UnrolledRun
           series={track.series}
@@ -135,6 +135,8 @@ export function SessionDetailCharts(props: SessionDetailChartsProps) {
       </Section>
       <Section
         id="bump-rides"
+        // Hundreds of lines that the comb shows already: a sheet of paper is for the run as a whole.
+        className="no-print"
         title="Bump rides"
         reading="Over the middle between a peak and its neighbouring lulls."
       >

@@ -74,7 +74,7 @@ export function MoreFigures({ figures, units, of }: Omit<Props, "discipline" | "
       title="Bests and bumps"
       reading={`${of}. Each best with its standard error, corrected for the luck of a maximum.`}
     >
-      <div className="grid items-start gap-x-10 md:grid-cols-2 xl:grid-cols-3">
+      <div className="grid items-start gap-x-10 md:grid-cols-2 xl:grid-cols-3 print:grid-cols-3 print:gap-x-6">
         <FigureList figures={bests.slice(0, half)} />
         <FigureList figures={bests.slice(half)} />
         {bumps.length > 0 && <FigureList figures={bumps} />}

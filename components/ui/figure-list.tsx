@@ -57,7 +57,7 @@ function FigureRow({ figure }: { figure: Figure }) {
     <div
       className={classNames(
         "rule-hair col-span-3 grid grid-cols-subgrid items-baseline",
-        big ? "py-1.5" : "py-2",
+        big ? "py-1.5" : "py-2 print:py-0.5",
       )}
     >
       <dt className={big ? "text-lg font-semibold" : undefined}>{words}</dt>

@@ -19,7 +19,7 @@ export function Section({
   children: ReactNode;
 }) {
   return (
-    <section aria-labelledby={`${id}-title`} id={id} className={classNames("mt-10", className)}>
+    <section aria-labelledby={`${id}-title`} id={id} className={classNames("mt-10 print:mt-6", className)}>
       <div className="flex flex-wrap items-baseline justify-between gap-x-6 gap-y-2 pb-2">
         <div className="flex min-w-0 flex-wrap items-baseline gap-x-3">
           <h2 id={`${id}-title`} className="text-lg">

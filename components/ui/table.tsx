@@ -70,7 +70,7 @@ export function Th(props: ThProps) {
       scope={scope}
       aria-sort={sorted}
       className={classNames(
-        "px-2 py-2 [overflow-wrap:normal] first:pl-0 last:pr-0",
+        "px-2 py-2 [overflow-wrap:normal] print:py-0.5 first:pl-0 last:pr-0",
         scope === "col"
           ? "border-ink border-b align-bottom text-sm font-semibold"
           : "align-baseline font-medium",
@@ -113,7 +113,7 @@ export function Td({
   return (
     <td
       className={classNames(
-        "px-2 py-2 align-baseline first:pl-0 last:pr-0",
+        "px-2 py-2 align-baseline print:py-0.5 first:pl-0 last:pr-0",
         numeric && "num text-right",
         className,
       )}
