@@ -42,7 +42,7 @@ const FIT = { padding: { top: 56, bottom: 72, left: 48, right: 72 }, maxZoom: 16
 
 /** Set off from land and water by a rim of the sheet's colour. */
 const PLACE =
-  "pointer-events-none block text-center text-sm leading-5 font-semibold text-ink [font-family:var(--sans)] [text-shadow:0_0_2px_var(--sheet),0_0_4px_var(--sheet),0_0_4px_var(--sheet)]";
+  "pointer-events-none block text-center text-sm leading-5 font-semibold text-ink [font-family:var(--sans)] [text-shadow:-1px_-1px_0_var(--sheet),1px_-1px_0_var(--sheet),-1px_1px_0_var(--sheet),1px_1px_0_var(--sheet),0_0_4px_var(--sheet)]";
 
 function words(label: string): Record<string, string> {
   return {

@@ -66,7 +66,14 @@ export function TrackMapStatic(props: TrackMapStaticProps) {
         return (
           <g key={`${place.name} ${x} ${y}`}>
             <rect x={x - 2} y={y - 2} width={4} height={4} className="fill-ink" />
-            <text x={x} y={y + 13} textAnchor="middle" className="fill-ink text-[11px] font-semibold">
+            <text
+              x={x}
+              y={y + 13}
+              textAnchor="middle"
+              className="fill-ink stroke-sheet text-[11px] font-semibold"
+              strokeWidth={3}
+              paintOrder="stroke"
+            >
               {place.name}
             </text>
           </g>
