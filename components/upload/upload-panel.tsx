@@ -74,7 +74,7 @@ export function UploadPanel(props: UploadPanelProps) {
         <DropArea onFiles={takeFiles}>
           <FileChoice onFiles={takeFiles} />
           <p id="upload-limits" className="text-muted mt-2 text-sm">
-            up to {limits.filesMax}, {Math.round(limits.bytesMax / 1_000_000)} MB each
+            up to {limits.filesMax} files, {Math.round(limits.bytesMax / 1_000_000)} MB each
             <span className="hidden sm:inline">; or drop them anywhere on this page</span>
           </p>
           <noscript>

@@ -19,8 +19,7 @@ export default async function QuiverPage({ searchParams }: PageProps<"/quiver">)
   const [parts, setups] = await pageRead("/quiver", () => Promise.all([listParts(ctx), listSetups(ctx)]));
   const names = new Map(parts.map((part) => [part.id, `${part.maker} ${part.model}`]));
   const inUse = <T extends { retiredAtMs: number | null }>(row: T) => row.retiredAtMs === null;
-  const retiredParts = parts.filter((part) => !inUse(part));
-  const retiredSetups = setups.filter((setup) => !inUse(setup));
+  const isRetired = <T extends { retiredAtMs: number | null }>(row: T) => !inUse(row);
   const newPart = <LinkButton href="/quiver/parts/new">Add a part</LinkButton>;
   const newSetup = (
     <LinkButton look="main" href="/quiver/setups/new">
@@ -50,10 +49,12 @@ export default async function QuiverPage({ searchParams }: PageProps<"/quiver">)
           </EmptyState>
         )}
       </Section>
-      <Section id="parts" title="Parts" actions={parts.length > 0 && newPart}>
-        {parts.some(inUse) && <PartTable caption="Parts in use" parts={parts.filter(inUse)} />}
-      </Section>
-      <RetiredGear parts={retiredParts} setups={retiredSetups} partNames={names} />
+      {parts.length > 0 && (
+        <Section id="parts" title="Parts" actions={newPart}>
+          <PartTable caption="Parts in use" parts={parts.filter(inUse)} />
+        </Section>
+      )}
+      <RetiredGear parts={parts.filter(isRetired)} setups={setups.filter(isRetired)} partNames={names} />
     </>
   );
 }

@@ -43,7 +43,7 @@ export const newPasswordField = z
     if (problem !== null) issue.addIssue({ code: "custom", message: problem });
   });
 
-const NAME_TEXT = "Enter your name, as others should read it.";
+const NAME_TEXT = "Enter your name.";
 
 export const nameField = z
   .string({ error: NAME_TEXT })

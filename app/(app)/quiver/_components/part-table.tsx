@@ -6,6 +6,7 @@ import { partSummary } from "./form-values";
 
 /** Parts with the dimensions that tell them apart. */
 export function PartTable(props: { caption: string; parts: readonly Awaited<ReturnType<typeof getPart>>[] }) {
+  if (props.parts.length === 0) return <p className="text-muted rule-ink py-3">Every part is retired.</p>;
   return (
     <Table caption={props.caption}>
       <thead>
