@@ -6,7 +6,7 @@ import { ThemeSwitch, type ThemeChoice } from "./theme-switch";
 export function SiteFooter({ theme }: { theme: ThemeChoice }) {
   return (
     <footer className="border-ink mt-auto border-t">
-      <div className="page grid gap-x-12 gap-y-6 py-8 md:grid-cols-[minmax(0,2fr)_minmax(0,1fr)]">
+      <div className="page grid gap-x-12 gap-y-6 py-8 print:py-2 md:grid-cols-[minmax(0,2fr)_minmax(0,1fr)]">
         <div className="text-muted flex max-w-2xl flex-col gap-2 text-sm">
           <p>{CAUTIONS.water}</p>
           <p>{CAUTIONS.speed}</p>
