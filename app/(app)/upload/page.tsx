@@ -1,4 +1,6 @@
 import type { Metadata } from "next";
+import { CAUTIONS } from "@/components/shell/cautions";
+import { Notice } from "@/components/ui/notice";
 import { PageHeader } from "@/components/ui/page-header";
 import { UploadPanel } from "@/components/upload/upload-panel";
 import { pageRead } from "@/lib/server/adapter/page";
@@ -42,6 +44,10 @@ export default async function UploadPage() {
         waiting={waiting}
         actions={ACTIONS}
       />
+      <Notice kind="caution" className="mt-10 max-w-prose text-sm">
+        <p>{CAUTIONS.water}</p>
+        <p className="mt-2">{CAUTIONS.speed}</p>
+      </Notice>
     </>
   );
 }
