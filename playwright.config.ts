@@ -48,6 +48,8 @@ export default defineConfig({
     url: `http://localhost:${port}/api/health`,
     timeout: 60_000,
     reuseExistingServer: process.env.E2E_REUSE === "1",
+    // Asks the server to end; killed, it would leave its child holding the pipes and the run would never end.
+    gracefulShutdown: { signal: "SIGTERM", timeout: 15_000 },
     stdout: "ignore",
     stderr: "pipe",
     env: {

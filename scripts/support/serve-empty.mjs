@@ -9,4 +9,4 @@ if (dataDir === undefined || !dataDir.includes("test-results")) {
   process.exit(1);
 }
 rmSync(dataDir, { recursive: true, force: true });
-await serve({ port: portFromEnv(), env: { DATA_DIR: dataDir }, ready: () => say("ready") });
+await serve({ port: portFromEnv(), env: { DATA_DIR: dataDir }, ready: () => say("ready"), ownGroup: false });

@@ -152,12 +152,12 @@ export async function requireFreePort(port) {
 
 /**
  * Serves the built app until it is told to stop. The first Ctrl-C or SIGTERM ends the server and this command
- * with status 0; children given along are ended too.
+ * with status 0; children given along are ended too. `ownGroup` keeps a terminal's Ctrl-C from reaching the server twice.
  */
-export async function serve({ port, env, others = [], ready }) {
+export async function serve({ port, env, others = [], ready, ownGroup = true }) {
   const server = start(process.execPath, [bin("next"), "start", "--port", String(port)], {
     env: { ...env, PORT: String(port), NODE_ENV: "production" },
-    detached: process.platform !== "win32",
+    detached: ownGroup && process.platform !== "win32",
   });
   let stopping = false;
   const ended = new Promise((resolve) => server.once("exit", (code) => resolve(code)));
