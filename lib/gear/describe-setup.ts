@@ -1,5 +1,3 @@
-import type { SetupInput } from "./part-schema";
-
 /**
  * A shim stack in words of the trade: "no shim", "+½° shim", "-0.75° shim".
  *
@@ -25,38 +23,4 @@ export function describeMastPosition(mastPositionMm: number | null): string | nu
   if (mastPositionMm === null) return null;
   if (mastPositionMm === 0) return "mast at reference";
   return `mast ${mastPositionMm > 0 ? "+" : "−"}${Math.abs(mastPositionMm)} mm`;
-}
-
-type Adjusted = Pick<
-  SetupInput,
-  | "frontWingId"
-  | "rearWingId"
-  | "fuselageId"
-  | "mastId"
-  | "boardId"
-  | "handWingId"
-  | "shimSetId"
-  | "mastPositionMm"
-  | "shimStackDeg"
->;
-
-const ADJUSTMENTS = [
-  "frontWingId",
-  "rearWingId",
-  "fuselageId",
-  "mastId",
-  "boardId",
-  "handWingId",
-  "mastPositionMm",
-  "shimStackDeg",
-] as const;
-
-export type Adjustment = (typeof ADJUSTMENTS)[number];
-
-/**
- * Which parts or adjustments differ between two setups, in a fixed order. The shim set is left out: the stack
- * says what is under the rear wing. One entry means a one-change pair.
- */
-export function setupDifferences(a: Adjusted, b: Adjusted): Adjustment[] {
-  return ADJUSTMENTS.filter((key) => a[key] !== b[key]);
 }

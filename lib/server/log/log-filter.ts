@@ -1,5 +1,4 @@
 import { z } from "zod";
-import { PART_KINDS } from "@/lib/gear/dimension-fields";
 
 /** The columns the log can be sorted by; anything else in the URL falls back to the start. */
 export const LOG_SORTS = [
@@ -99,6 +98,3 @@ export type CompareBy = (typeof COMPARE_BY)[number];
 export function parseCompareBy(value: string | string[] | undefined): CompareBy {
   return z.enum(COMPARE_BY).catch("setup").parse(value);
 }
-
-/** Part kinds a log can be filtered by in the "any part" field. */
-export const FILTER_PART_KINDS = PART_KINDS;
